@@ -3,5 +3,6 @@ import { defineConfig } from 'drizzle-kit';
 export default defineConfig({
 	dialect: 'mysql',
 	schema: './src/lib/server/db/schema/*.ts',
-	out: './drizzle'
+	out: './drizzle',
+	casing: 'snake_case'
 });

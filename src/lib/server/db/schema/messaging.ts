@@ -1,0 +1,201 @@
+import { boolean, datetime, index, int, json, mysqlTable, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core';
+import type { Channel, MessageKind, MessageState } from '../../../domain/messaging/kinds';
+import type { Language } from '../../../domain/messaging/language';
+import { asciiWord, instant, recordId } from '../columns';
+import { followUps } from './follow-up';
+import { carers } from './newborn';
+import { organisations, sites } from './organisation';
+
+/** Wording of one kind, channel and language; a changed wording is a new version, never an edit. */
+export const messageTemplates = mysqlTable(
+	'message_templates',
+	{
+		id: recordId().primaryKey(),
+		organisationId: recordId()
+			.notNull()
+			.references(() => organisations.id),
+		kind: asciiWord({ length: 32 }).$type<MessageKind>().notNull(),
+		channel: asciiWord({ length: 6 }).$type<Channel>().notNull(),
+		language: asciiWord({ length: 5 }).$type<Language>().notNull(),
+		version: int().notNull(),
+		/** Mail only. */
+		subject: varchar({ length: 200 }),
+		body: text().notNull(),
+		standing: asciiWord({ length: 10 }).$type<'draft' | 'reviewed'>().notNull(),
+		reviewedBy: varchar({ length: 120 }),
+		isCurrent: boolean(),
+		createdBy: recordId(),
+		createdAt: instant().notNull()
+	},
+	(t) => [
+		uniqueIndex('message_templates_version').on(t.organisationId, t.kind, t.channel, t.language, t.version),
+		uniqueIndex('message_templates_current').on(t.organisationId, t.kind, t.channel, t.language, t.isCurrent)
+	]
+);
+
+/** The outbox: one row is one message to one carer over one channel. */
+export const messages = mysqlTable(
+	'messages',
+	{
+		id: recordId().primaryKey(),
+		/** Null only for mail to the organisation's own people. */
+		followUpId: recordId().references(() => followUps.id),
+		siteId: recordId()
+			.notNull()
+			.references(() => sites.id),
+		carerId: recordId().references(() => carers.id),
+		kind: asciiWord({ length: 32 }).$type<MessageKind>().notNull(),
+		/** What it is about: a visit id, a date, a check-in id. */
+		occasion: asciiWord({ length: 60 }).notNull(),
+		channel: asciiWord({ length: 6 }).$type<Channel>().notNull(),
+		language: asciiWord({ length: 5 }).$type<Language>().notNull(),
+		/** Follow-up, kind, occasion, carer and channel in one word: the same message is never planned twice. */
+		dedupeKey: asciiWord({ length: 160 }).notNull(),
+		/** Wording used, set when rendered for sending. */
+		templateId: recordId(),
+		/** Ids and facts the wording needs beside the follow-up; no names, no numbers, no rendered text. */
+		facts: json().$type<Record<string, string>>().notNull(),
+
+		state: asciiWord({ length: 12 }).$type<MessageState>().notNull(),
+		/** 0 urgent, 5 ordinary, 9 can wait. */
+		priority: int().notNull(),
+		/** Not sent before; moved on by quiet hours, retries and withdrawals of a provider. */
+		runAt: instant().notNull(),
+		/** Not sent after. */
+		expiresAt: instant().notNull(),
+
+		/** Set by a claim, cleared when the message leaves `sending`. */
+		lockedBy: asciiWord({ length: 60 }),
+		lockedUntil: instant(),
+		/** Grows with every claim; with `lockedBy` it fences a late worker out. */
+		attempts: int().notNull().default(0),
+		/** The last provider call began; set before the call, so that a crash leaves a trace to reconcile. */
+		callBeganAt: instant(),
+		lastError: varchar({ length: 300 }),
+
+		/** The provider's id, set when the send is recorded. */
+		providerId: asciiWord({ length: 80 }),
+		sentAt: instant(),
+		/** Last known delivery status; moves forward only. */
+		delivery: asciiWord({ length: 16 }),
+		deliveryAt: instant(),
+		deliveryError: varchar({ length: 120 }),
+		/** The fallback was planned; set once. */
+		fellBackAt: instant(),
+		createdAt: instant().notNull(),
+		updatedAt: instant().notNull()
+	},
+	(t) => [
+		uniqueIndex('messages_dedupe').on(t.dedupeKey),
+		index('messages_claim').on(t.state, t.priority, t.runAt, t.id),
+		index('messages_lease').on(t.state, t.lockedUntil),
+		index('messages_follow_up').on(t.followUpId, t.runAt),
+		index('messages_provider').on(t.providerId),
+		index('messages_fallback').on(t.state, t.channel, t.fellBackAt, t.sentAt)
+	]
+);
+
+/** What providers told us, verified and stored before it is acted on. */
+export const providerEvents = mysqlTable(
+	'provider_events',
+	{
+		id: recordId().primaryKey(),
+		provider: asciiWord({ length: 10 }).$type<'sms' | 'mail'>().notNull(),
+		eventKey: asciiWord({ length: 120 }).notNull(),
+		kind: asciiWord({ length: 12 }).$type<'delivery' | 'inbound'>().notNull(),
+		payload: json().$type<Record<string, string>>().notNull(),
+		receivedAt: instant().notNull(),
+		handledAt: instant()
+	},
+	(t) => [
+		uniqueIndex('provider_events_once').on(t.provider, t.eventKey),
+		index('provider_events_waiting').on(t.handledAt, t.receivedAt)
+	]
+);
+
+/** The thread with a family: what came in, and what staff wrote by hand. Planned messages are in `messages`. */
+export const threadEntries = mysqlTable(
+	'thread_entries',
+	{
+		id: recordId().primaryKey(),
+		/** Null while the sender has to say which newborn is meant. */
+		followUpId: recordId().references(() => followUps.id),
+		carerId: recordId().references(() => carers.id),
+		phone: asciiWord({ length: 20 }),
+		direction: asciiWord({ length: 4 }).$type<'in' | 'out'>().notNull(),
+		body: text().notNull(),
+		/** What the words were understood as. */
+		understoodAs: asciiWord({ length: 20 }),
+		isAlarming: boolean().notNull().default(false),
+		staffId: recordId(),
+		messageId: recordId(),
+		/** The provider's id of an incoming message, once. */
+		providerId: asciiWord({ length: 80 }),
+		readAt: instant(),
+		readBy: recordId(),
+		at: instant().notNull()
+	},
+	(t) => [
+		uniqueIndex('thread_entries_provider').on(t.providerId),
+		index('thread_entries_follow_up').on(t.followUpId, t.at),
+		index('thread_entries_phone').on(t.phone, t.at)
+	]
+);
+
+/** Circuit breaker and rate of one sender, shared by every worker. */
+export const senders = mysqlTable('senders', {
+	/** `sms` or `mail`, or a number of its own. */
+	id: asciiWord({ length: 40 }).primaryKey(),
+	pausedUntil: instant(),
+	failuresInARow: int().notNull().default(0),
+	/** Start of the second that `sentInWindow` counts. */
+	windowStartedAt: instant(),
+	sentInWindow: int().notNull().default(0)
+});
+
+export const workers = mysqlTable('workers', {
+	id: asciiWord({ length: 60 }).primaryKey(),
+	startedAt: instant().notNull(),
+	heardAt: instant().notNull(),
+	stoppedAt: instant()
+});
+
+/** The last run of each periodic job, so that a tick missed while every process was down is made up. */
+export const ticks = mysqlTable('ticks', {
+	name: asciiWord({ length: 40 }).primaryKey(),
+	lastRunAt: datetime({ mode: 'date', fsp: 3 }).notNull(),
+	lastTookMilliseconds: int(),
+	lastError: varchar({ length: 300 })
+});
+
+/** What the watch found and has not seen settled. */
+export const watchFindings = mysqlTable(
+	'watch_findings',
+	{
+		id: recordId().primaryKey(),
+		kind: asciiWord({ length: 32 }).notNull(),
+		subject: asciiWord({ length: 80 }).notNull(),
+		siteId: recordId(),
+		detail: varchar({ length: 300 }).notNull(),
+		foundAt: instant().notNull(),
+		mailedAt: instant(),
+		settledAt: instant()
+	},
+	(t) => [index('watch_findings_open').on(t.settledAt, t.kind), index('watch_findings_subject').on(t.kind, t.subject)]
+);
+
+/** A private calendar feed of one staff member and clinic; the token is kept as its hash. */
+export const calendarFeeds = mysqlTable(
+	'calendar_feeds',
+	{
+		id: recordId().primaryKey(),
+		staffId: recordId().notNull(),
+		siteId: recordId()
+			.notNull()
+			.references(() => sites.id),
+		tokenHash: asciiWord({ length: 64 }).notNull(),
+		createdAt: instant().notNull(),
+		revokedAt: instant()
+	},
+	(t) => [uniqueIndex('calendar_feeds_token').on(t.tokenHash), index('calendar_feeds_staff').on(t.staffId)]
+);
