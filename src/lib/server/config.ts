@@ -81,7 +81,9 @@ export function parseConfig(env: Readonly<Record<string, string | undefined>>): 
 		const name = issue.path.join('.');
 		return env[name] === undefined ? `  ${name} is not set` : `  ${name}: ${issue.message}`;
 	});
-	throw new Error(`The environment is not complete:\n${lines.join('\n')}\nSee .env.example for what each one means.`);
+	throw new Error(
+		`The environment is not complete:\n${lines.join('\n')}\nSee .env.example for what each one means.`
+	);
 }
 
 let cached: Config | undefined;
