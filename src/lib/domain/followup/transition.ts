@@ -217,14 +217,13 @@ export function transition(
 		case 'assessed':
 			return ok(assessed(state, event, due));
 		case 'booked':
-		case 'moved':
 			return ok(enter(state, stageWithVisit(event.visit), { visit: event.visit }, due));
+		case 'moved':
 		case 'cancelled':
-			return ok(enter(state, 'to-book', { visit: null }, due));
 		case 'confirmed':
-			return ok(
-				enter(state, 'confirmed', { visit: state.visit && { ...state.visit, isConfirmed: true } }, due)
-			);
+		case 'arrived':
+		case 'missed':
+			return ok(visitChanged(state, event, due));
 		case 'handed-over':
 			return ok(
 				enter(state, stageWithVisit(state.visit), { handedOverAt: state.handedOverAt ?? due.now }, due)
