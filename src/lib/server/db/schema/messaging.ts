@@ -1,4 +1,14 @@
-import { boolean, datetime, index, int, json, mysqlTable, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core';
+import {
+	boolean,
+	datetime,
+	index,
+	int,
+	json,
+	mysqlTable,
+	text,
+	uniqueIndex,
+	varchar
+} from 'drizzle-orm/mysql-core';
 import type { Channel, MessageKind, MessageState } from '../../../domain/messaging/kinds';
 import type { Language } from '../../../domain/messaging/language';
 import { asciiWord, instant, recordId } from '../columns';
@@ -64,13 +74,18 @@ export const messages = mysqlTable(
 		/** Not sent after. */
 		expiresAt: instant().notNull(),
 
-		/** Set by a claim, cleared when the message leaves `sending`. */
+		/** Worker and number of its claim, so no two claims share it; whoever finishes must name it. Cleared with the lease. */
 		lockedBy: asciiWord({ length: 60 }),
+		/** End of the lease by the database's clock; renewed while the worker lives. */
 		lockedUntil: instant(),
-		/** Grows with every claim; with `lockedBy` it fences a late worker out. */
+		/** Grows with every claim; a message that keeps killing its worker is given up by it. */
+		claims: int().notNull().default(0),
+		/** Calls that failed or left no trace at the provider; drives the back-off. A stop by signal does not count. */
 		attempts: int().notNull().default(0),
-		/** The last provider call began; set before the call, so that a crash leaves a trace to reconcile. */
+		/** The call may have begun, by the database's clock; set before it, cleared when it is known not to have been made. */
 		callBeganAt: instant(),
+		/** Where that call was addressed, so that a lost answer is looked for there even if the carer's number changes. */
+		address: varchar({ length: 200 }),
 		lastError: varchar({ length: 300 }),
 
 		/** The provider's id, set when the send is recorded. */
@@ -80,18 +95,23 @@ export const messages = mysqlTable(
 		delivery: asciiWord({ length: 16 }),
 		deliveryAt: instant(),
 		deliveryError: varchar({ length: 120 }),
+		/** Owes a fallback from here on; cleared once delivered, and when the next route is planned or the desk told. */
+		unprovenSince: instant(),
 		/** The fallback was planned; set once. */
 		fellBackAt: instant(),
+		/** The message that this one steps in for; the plan leaves such rows alone. */
+		fallbackOfId: recordId(),
 		createdAt: instant().notNull(),
 		updatedAt: instant().notNull()
 	},
 	(t) => [
 		uniqueIndex('messages_dedupe').on(t.dedupeKey),
-		index('messages_claim').on(t.state, t.priority, t.runAt, t.id),
+		// All equal down to run_at, so that a claim reads only due rows, in order, of one site: no filesort, nothing else locked.
+		index('messages_claim').on(t.state, t.channel, t.priority, t.siteId, t.runAt, t.id),
 		index('messages_lease').on(t.state, t.lockedUntil),
 		index('messages_follow_up').on(t.followUpId, t.runAt),
 		index('messages_provider').on(t.providerId),
-		index('messages_fallback').on(t.state, t.channel, t.fellBackAt, t.sentAt)
+		index('messages_unproven').on(t.unprovenSince)
 	]
 );
 
@@ -146,11 +166,12 @@ export const threadEntries = mysqlTable(
 export const senders = mysqlTable('senders', {
 	/** `sms` or `mail`, or a number of its own. */
 	id: asciiWord({ length: 40 }).primaryKey(),
+	/** No call before this instant: the breaker is open, or the provider asked for a pause. */
 	pausedUntil: instant(),
+	/** Failures that were the provider's, not the message's; a success ends the row. */
 	failuresInARow: int().notNull().default(0),
-	/** Start of the second that `sentInWindow` counts. */
-	windowStartedAt: instant(),
-	sentInWindow: int().notNull().default(0)
+	/** Everything granted so far is paid off at the sender's rate by then; grants may run ahead of it by the burst. */
+	rateFreeAt: instant()
 });
 
 export const workers = mysqlTable('workers', {
@@ -181,7 +202,10 @@ export const watchFindings = mysqlTable(
 		mailedAt: instant(),
 		settledAt: instant()
 	},
-	(t) => [index('watch_findings_open').on(t.settledAt, t.kind), index('watch_findings_subject').on(t.kind, t.subject)]
+	(t) => [
+		index('watch_findings_open').on(t.settledAt, t.kind),
+		index('watch_findings_subject').on(t.kind, t.subject)
+	]
 );
 
 /** A private calendar feed of one staff member and clinic; the token is kept as its hash. */

@@ -1,0 +1,1 @@
+ALTER TABLE `senders` ADD `rate_free_at` datetime(3);
