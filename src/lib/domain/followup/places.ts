@@ -25,6 +25,7 @@ export interface PlaceTime {
 
 export interface TakenPlace {
 	readonly startsAt: Date;
+	readonly kind: VisitKind;
 	readonly placeNumber: number;
 }
 
@@ -56,10 +57,11 @@ export function placesBetween(asked: {
 	readonly until: Date;
 }): PlaceTime[] {
 	const { openings, closedDays, timeZone, taken, from, until } = asked;
-	const takenAt = new Map<number, Set<number>>();
-	for (const { startsAt, placeNumber } of taken) {
-		const numbers = takenAt.get(startsAt.getTime()) ?? new Set<number>();
-		takenAt.set(startsAt.getTime(), numbers.add(placeNumber));
+	const keyOf = (startsAt: Date, kind: VisitKind) => `${startsAt.getTime()} ${kind}`;
+	const takenAt = new Map<string, Set<number>>();
+	for (const { startsAt, kind, placeNumber } of taken) {
+		const numbers = takenAt.get(keyOf(startsAt, kind)) ?? new Set<number>();
+		takenAt.set(keyOf(startsAt, kind), numbers.add(placeNumber));
 	}
 	const places: PlaceTime[] = [];
 	const last = DateTime.fromJSDate(until, { zone: timeZone });
@@ -72,7 +74,7 @@ export function placesBetween(asked: {
 		for (const opening of openings.filter((o) => o.weekday === day.weekday)) {
 			for (const time of timesOfDay(day, opening)) {
 				if (time.startsAt < from || time.startsAt > until) continue;
-				const used = takenAt.get(time.startsAt.getTime());
+				const used = takenAt.get(keyOf(time.startsAt, opening.visitKind));
 				const numbers = Array.from({ length: opening.placesAtOnce }, (_, i) => i + 1);
 				const freeNumbers = numbers.filter((n) => !used?.has(n));
 				places.push({ ...time, kind: opening.visitKind, freeNumbers, placesAtOnce: opening.placesAtOnce });

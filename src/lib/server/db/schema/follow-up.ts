@@ -5,7 +5,14 @@ import type { AlertKind } from '../../../domain/followup/alert';
 import type { AttemptChannel, AttemptOutcome } from '../../../domain/followup/attempt';
 import type { NextStepKind, Outcome, Stage, TransitionKind } from '../../../domain/followup/states';
 import type { VisitKind, VisitState } from '../../../domain/followup/visit';
-import type { CheckInAnswers, CheckInReason, CheckInResult, Disposition, StandardId, WindowTest } from '../../../domain/guideline/types';
+import type {
+	CheckInAnswers,
+	CheckInReason,
+	CheckInResult,
+	Disposition,
+	StandardId,
+	WindowTest
+} from '../../../domain/guideline/types';
 import { asciiWord, instant, recordId } from '../columns';
 import { carers, measurements, newborns } from './newborn';
 import { sites } from './organisation';
@@ -146,11 +153,14 @@ export const visits = mysqlTable(
 		otherTimeWish: varchar({ length: 300 })
 	},
 	(t) => [
-		uniqueIndex('visits_place').on(t.clinicId, t.startsAt, t.placeNumber, t.holdsPlace),
+		uniqueIndex('visits_place').on(t.clinicId, t.startsAt, t.kind, t.placeNumber, t.holdsPlace),
 		uniqueIndex('visits_one_open').on(t.followUpId, t.isOpen),
 		index('visits_follow_up').on(t.followUpId, t.startsAt),
 		index('visits_clinic_day').on(t.clinicId, t.startsAt),
-		check('visits_marks', sql`(${t.holdsPlace} is null or ${t.holdsPlace} = 1) and (${t.isOpen} is null or (${t.isOpen} = 1 and ${t.holdsPlace} = 1))`)
+		check(
+			'visits_marks',
+			sql`(${t.holdsPlace} is null or ${t.holdsPlace} = 1) and (${t.isOpen} is null or (${t.isOpen} = 1 and ${t.holdsPlace} = 1))`
+		)
 	]
 );
 
