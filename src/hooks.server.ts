@@ -1,0 +1,129 @@
+import { building } from '$app/environment';
+import { textDirection } from '$lib/domain/messaging/language';
+import { appContext, closeAppContext } from '$lib/server/app-context';
+import { decideAccess, needOf } from '$lib/server/auth/route-access';
+import { readSession, sessionCookieName } from '$lib/server/auth/session';
+import { describeFailure } from '$lib/server/http/failure';
+import { isForged } from '$lib/server/http/forgery';
+import { protectHeaders } from '$lib/server/http/headers';
+import { refuse, sendToSignIn } from '$lib/server/http/refusal';
+import { readTheme, THEME_COOKIE } from '$lib/ui/theme';
+import type { Handle, HandleServerError, RequestEvent, ServerInit } from '@sveltejs/kit';
+import { sequence } from '@sveltejs/kit/hooks';
+import errorPage from './error.html?raw';
+
+export const init: ServerInit = () => {
+	if (building) return;
+	const { log, config } = appContext();
+	log.info({ origin: config.origin }, 'web server is up');
+	process.once('sveltekit:shutdown', () => {
+		closeAppContext().catch((error: unknown) => log.error(describeFailure(error), 'closing the pool failed'));
+	});
+};
+
+const identify: Handle = ({ event, resolve }) => {
+	const ctx = appContext();
+	const requestId = ctx.random.id();
+	Object.assign(event.locals, {
+		actor: null,
+		sessionId: null,
+		pendingStaffId: null,
+		requestId,
+		ctx: { ...ctx, log: ctx.log.child({ requestId }) },
+		theme: readTheme(event.cookies.get(THEME_COOKIE)),
+		language: 'en'
+	} satisfies App.Locals);
+	return resolve(event);
+};
+
+const setHeaders: Handle = async ({ event, resolve }) => {
+	const response = await resolve(event);
+	protectHeaders(response.headers, event.locals.ctx.config.origin.startsWith('https:'));
+	response.headers.set('x-request-id', event.locals.requestId);
+	return response;
+};
+
+const refuseForgery: Handle = ({ event, resolve }) => {
+	if (!isForged(event.request, event.url)) return resolve(event);
+	return refuse(event, 403, 'This form was sent from another site, so nothing was done.', errorPage);
+};
+
+const findActor: Handle = async ({ event, resolve }) => {
+	const { ctx } = event.locals;
+	const cookie = event.cookies.get(sessionCookieName(ctx));
+	if (cookie) {
+		const session = await readSession(ctx, cookie);
+		if (session.state !== 'none') event.locals.sessionId = session.sessionId;
+		if (session.state === 'half') event.locals.pendingStaffId = session.staffId;
+		if (session.state === 'signed-in') {
+			event.locals.actor = session.actor;
+			if (session.cookie) {
+				event.cookies.set(session.cookie.name, session.cookie.value, {
+					...session.cookie.attributes,
+					path: '/'
+				});
+			}
+		}
+	}
+	return resolve(event);
+};
+
+const checkAccess: Handle = ({ event, resolve }) => {
+	// Without a route there is nothing to protect: the framework answers 404 in our own layout.
+	if (event.route.id === null) return resolve(event);
+	const need = needOf(event.route.id, event.request.method, event.url);
+	if (need === null) {
+		event.locals.ctx.log.warn(
+			{ route: event.route.id, method: event.request.method },
+			'not in the route table'
+		);
+		return refuse(event, 404, 'There is no such page.', errorPage);
+	}
+	switch (decideAccess(need, event.locals.actor, isLoopback(event))) {
+		case 'allow':
+			return resolve(event);
+		case 'sign-in-first':
+			return sendToSignIn(event);
+		case 'not-your-work':
+			return refuse(event, 403, 'This screen belongs to another role than yours.', errorPage);
+	}
+};
+
+/** A proxy on this machine is not the machine itself asking. */
+function isLoopback({ request, getClientAddress }: RequestEvent): boolean {
+	if (request.headers.has('x-forwarded-for') || request.headers.has('forwarded')) return false;
+	return ['127.0.0.1', '::1', '::ffff:127.0.0.1'].includes(getClientAddress());
+}
+
+const fillShell: Handle = ({ event, resolve }) =>
+	resolve(event, {
+		transformPageChunk: ({ html }) =>
+			html
+				.replace('%lang%', event.locals.language)
+				.replace('%dir%', textDirection(event.locals.language))
+				.replace('%theme%', event.locals.theme)
+	});
+
+export const handle = sequence(identify, setHeaders, refuseForgery, findActor, checkAccess, fillShell);
+
+export const handleError: HandleServerError = ({ error, event, status }) => {
+	if (status === 404) return { message: 'There is no such page.' };
+	const { log, random } = appContext();
+	const errorId = random.id();
+	log.error(
+		{
+			errorId,
+			requestId: event.locals.requestId,
+			route: event.route.id,
+			method: event.request.method,
+			status,
+			failure: describeFailure(error)
+		},
+		'a request failed'
+	);
+	return {
+		message:
+			'Something broke on our side. What was saved before is still there; this last step was not saved.',
+		errorId
+	};
+};
