@@ -29,5 +29,13 @@ export type MessageKind = (typeof MESSAGE_KINDS)[number];
  * stored, so the provider is asked before anything else. sent: the provider accepted it. withdrawn: no longer holds.
  * expired: too late to be of use. dead: given up, with an alert that somebody owns.
  */
-export const MESSAGE_STATES = ['planned', 'sending', 'unknown', 'sent', 'withdrawn', 'expired', 'dead'] as const;
+export const MESSAGE_STATES = [
+	'planned',
+	'sending',
+	'unknown',
+	'sent',
+	'withdrawn',
+	'expired',
+	'dead'
+] as const;
 export type MessageState = (typeof MESSAGE_STATES)[number];
