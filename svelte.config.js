@@ -6,7 +6,8 @@ export default {
 	preprocess: vitePreprocess(),
 	compilerOptions: { runes: ({ filename }) => (filename.includes('node_modules') ? undefined : true) },
 	kit: {
-		adapter: adapter(),
+		// The tests build beside the running product, not under it.
+		adapter: adapter({ out: process.env.BUILD_DIR ?? 'build' }),
 		// hooks.server.ts repeats this check; providers' signed form posts carry no Origin and need the exemption there.
 		csrf: { trustedOrigins: ['*'] },
 		csp: {

@@ -17,7 +17,10 @@ import { run, startService, tail, waitUntil } from './processes.mjs';
 
 /** The kernel refuses longer socket paths (108 bytes with the closing zero). */
 const SOCKET_PATH_LIMIT = 107;
+/** Present once the data folder is whole. */
 const STAMP = '.complete';
+/** Present until the tables and the demo have been put in for the first time; until then nobody has worked in it. */
+const UNFILLED = '.unfilled';
 export const DATABASE_NAME = 'fadewell';
 export const DATABASE_USER = 'fadewell';
 
@@ -102,6 +105,7 @@ export async function prepareData(base) {
 	if (made.code !== 0) {
 		throw new Error(`The database's data folder could not be made in ${base}:\n${made.output.trim()}`);
 	}
+	writeFileSync(join(base, UNFILLED), '');
 	// Last: without this stamp the folder counts as half-made.
 	writeFileSync(join(base, STAMP), '');
 	return { created: true, setAside };
@@ -193,11 +197,32 @@ export async function ensureAccount(database, { password, everyDatabase = false 
 		`delete from mysql.global_priv where User = ''`,
 		'flush privileges'
 	].join(';\n');
-	const done = await run('mariadb', ['--no-defaults', `--socket=${database.socket}`, '-uroot'], {
-		env: withSbin(),
-		input: sql
-	});
-	if (done.code !== 0) throw new Error(`The database account could not be made:\n${done.output.trim()}`);
+	await asRoot(database, sql);
+}
+
+/** @param {string} base */
+export function isUnfilled(base) {
+	return existsSync(join(base, UNFILLED));
+}
+
+/** @param {string} base */
+export function markFilled(base) {
+	rmSync(join(base, UNFILLED), { force: true });
+}
+
+/**
+ * Empties a database in which the first filling was interrupted: half of it would pass for the whole.
+ * @param {PrivateDatabase} database
+ */
+export async function dropDatabase(database) {
+	await asRoot(database, `drop database if exists ${DATABASE_NAME}`);
+}
+
+/** @param {PrivateDatabase} database @param {string} sql */
+async function asRoot(database, sql) {
+	const args = ['--no-defaults', `--socket=${database.socket}`, '-uroot'];
+	const done = await run('mariadb', args, { env: withSbin(), input: sql });
+	if (done.code !== 0) throw new Error(`The database could not be set up:\n${done.output.trim()}`);
 }
 
 /**
@@ -209,13 +234,14 @@ export function databaseUrl({ port, password, name = DATABASE_NAME }) {
 }
 
 /**
- * The process id that a server left in its pid file; null when there is none.
+ * The id of a server that still works on the data in `base`, left over from a start that was killed; null when none.
  * @param {string} base @returns {number | null}
  */
-export function recordedPid(base) {
+export function leftoverServer(base) {
 	try {
 		const pid = Number(readFileSync(join(base, 'mariadb.pid'), 'utf8').trim());
-		return Number.isInteger(pid) && pid > 0 ? pid : null;
+		const command = readFileSync(`/proc/${pid}/cmdline`, 'utf8').split('\0');
+		return command.includes(`--datadir=${join(base, 'data')}`) ? pid : null;
 	} catch {
 		return null;
 	}

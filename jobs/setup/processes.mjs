@@ -60,15 +60,21 @@ export function signalQuietly(pid, signal) {
 }
 
 /**
- * Runs a command to its end.
+ * Runs a command to its end, in a process group of its own: Ctrl-C in the terminal reaches only us.
  * @param {string} command @param {string[]} args
- * @param {{ env?: NodeJS.ProcessEnv, cwd?: string, input?: string, onOutput?: (text: string) => void }} [options]
- *   `onOutput` is given both streams as they come.
+ * @param {{ env?: NodeJS.ProcessEnv, cwd?: string, input?: string, signal?: AbortSignal, onOutput?: (text: string) => void }} [options]
+ *   `onOutput` is given both streams as they come; `signal` ends the command and everything it started.
  * @returns {Promise<{ code: number, output: string }>} `code` is 127 when the command does not exist and 128 after a signal.
  */
-export function run(command, args, { env, cwd, input, onOutput } = {}) {
+export function run(command, args, { env, cwd, input, signal, onOutput } = {}) {
 	return new Promise((resolve) => {
-		const child = spawn(command, args, { env, cwd, stdio: ['pipe', 'pipe', 'pipe'] });
+		const child = spawn(command, args, { env, cwd, detached: true, stdio: ['pipe', 'pipe', 'pipe'] });
+		const end = () => child.pid !== undefined && signalQuietly(-child.pid, 'SIGTERM');
+		signal?.addEventListener('abort', end, { once: true });
+		const settle = (/** @type {number} */ code, /** @type {string} */ text) => {
+			signal?.removeEventListener('abort', end);
+			resolve({ code, output: text });
+		};
 		let output = '';
 		const take = (/** @type {Buffer} */ chunk) => {
 			const text = chunk.toString('utf8');
@@ -77,8 +83,8 @@ export function run(command, args, { env, cwd, input, onOutput } = {}) {
 		};
 		child.stdout.on('data', take);
 		child.stderr.on('data', take);
-		child.once('error', (error) => resolve({ code: 127, output: error.message }));
-		child.once('close', (code) => resolve({ code: code ?? 128, output }));
+		child.once('error', (error) => settle(127, error.message));
+		child.once('close', (code) => settle(code ?? 128, output));
 		child.stdin.on('error', () => {
 			// The command ended without reading its input; its exit code says why.
 		});
