@@ -7,9 +7,17 @@ import { ENGLISH, type HourLineWords } from './words';
 
 const STANDING = new Set<HourLineVisit['state']>(['booked', 'confirmed', 'arrived', 'missed']);
 
-/** The visit that matters now: the last one that was neither cancelled nor moved. */
+/** The visit that matters now: the latest one that was neither cancelled nor moved. */
 export function standingVisit(model: HourLineModel): HourLineVisit | undefined {
-	return model.visits?.findLast((visit) => STANDING.has(visit.state));
+	return latestOf(model.visits?.filter((visit) => STANDING.has(visit.state)));
+}
+
+/** The latest mark, in whatever order they were given. */
+function latestOf<Mark extends { readonly at: Date }>(marks: readonly Mark[] | undefined): Mark | undefined {
+	return (marks ?? []).reduce<Mark | undefined>(
+		(latest, mark) => (latest && latest.at > mark.at ? latest : mark),
+		undefined
+	);
 }
 
 /** "TSB 9.1 mg/dL at 40 h, 4.2 mg/dL below the line". */
@@ -36,9 +44,9 @@ function windowSentence(model: HourLineModel): string[] {
 /** What the picture says, in one line for staff: age, last value, window, visit, last check-in. */
 export function hourLineSentence(model: HourLineModel, words: HourLineWords = ENGLISH): string {
 	const style = { timeZone: model.timeZone };
-	const last = model.measurements?.at(-1);
+	const last = latestOf(model.measurements);
 	const visit = standingVisit(model);
-	const checkIn = model.checkIns?.at(-1);
+	const checkIn = latestOf(model.checkIns);
 	const parts = [
 		`Age ${formatAge(model.bornAt, model.now)}`,
 		last ? measurementSentence(model, last) : 'No bilirubin value yet',
