@@ -67,6 +67,10 @@ export interface AssessmentInput {
 	readonly standard: StandardId;
 	readonly gestationalAge: GestationalAge;
 	readonly bornAt: Date;
+	/**
+	 * When the newborn goes home, done or planned: from the birth stay, or, for a value taken at a later visit or
+	 * readmission, from that one.
+	 */
 	readonly dischargeAt: Date;
 	readonly neurotoxicityRisks: readonly NeurotoxicityRisk[];
 	readonly jaundiceRisks: readonly JaundiceRisk[];
@@ -114,7 +118,8 @@ export interface TraceStep {
 	/** Document, and table, figure or recommendation number. */
 	readonly source: string;
 	/** How sure we are of the source: see the guideline README. */
-	readonly confidence: 'printed' | 'transcribed' | 'from memory' | 'common practice, no source' | 'our reading';
+	readonly confidence:
+		'printed' | 'transcribed' | 'from memory' | 'common practice, no source' | 'our reading';
 }
 
 export type CautionSeverity = 'notice' | 'warning' | 'danger';
@@ -244,4 +249,6 @@ export interface CheckInContext {
 	readonly bornAt: Date;
 	readonly now: Date;
 	readonly birthWeightGrams?: number;
+	/** Sets the age of the prolonged-jaundice question; absent, the earlier one. */
+	readonly feeding?: Feeding;
 }

@@ -1,0 +1,183 @@
+import { DAY_MS, HOUR_MS } from './age';
+import { FIRST_HOUR, LAST_HOUR, lines } from './aap-2022-lines';
+import * as edition from './editions/aap-2022';
+import { lastWhere, type Decision } from './standard';
+import type { Caution } from './types';
+
+const CAUTIONS = {
+	options: {
+		code: 'options-near-line',
+		severity: 'warning',
+		text: 'Within 2 mg/dL of the line at 24 hours of age or more there are three ways: delay discharge and consider phototherapy; phototherapy at home if every criterion is met; or discharge without phototherapy with close follow-up.',
+		source: 'AAP 2022, figure 7'
+	},
+	'home-not-met': {
+		code: 'home-phototherapy-not-met',
+		severity: 'notice',
+		text: 'Phototherapy at home: at least one criterion is not met (38 weeks or more, 48 hours old or more, no neurotoxicity risk factor, no earlier phototherapy, serum not more than 1 mg/dL over the line).',
+		source: 'AAP 2022, from memory; an insurer policy repeats most of it'
+	},
+	'home-possible': {
+		code: 'home-phototherapy-possible',
+		severity: 'notice',
+		text: 'Phototherapy at home may be considered if the newborn is also well and feeding, an LED device is at home without delay, and serum can be measured every day.',
+		source: 'AAP 2022, from memory; an insurer policy repeats most of it'
+	},
+	escalate: {
+		code: 'escalation-of-care',
+		severity: 'danger',
+		text: 'Emergency: neonatal intensive care; at once total and direct bilirubin, blood count, albumin, chemistries, type and crossmatch; intensive phototherapy and fluids by vein and mouth; serum at least every 2 hours. Immunoglobulin may be given in isoimmune disease.',
+		source: 'AAP 2022, escalation of care'
+	},
+	exchange: {
+		code: 'exchange-line',
+		severity: 'danger',
+		text: 'At or over the exchange line. Exchange is also asked at any value when there are signs of intermediate or advanced bilirubin encephalopathy.',
+		source: 'AAP 2022, exchange transfusion'
+	},
+	workup: {
+		code: 'workup',
+		severity: 'notice',
+		text: 'With phototherapy: hemoglobin, hematocrit or blood count; antiglobulin test if the mother is group O, Rh(D) negative or screen positive; G6PD activity if jaundice is unexplained and rises in spite of treatment, suddenly or late.',
+		source: 'AAP 2022, one public copy'
+	},
+	ratio: {
+		code: 'bilirubin-albumin-ratio',
+		severity: 'danger',
+		text: 'The ratio of bilirubin to albumin has reached the value at which exchange may be considered for this gestational age and risk.',
+		source: 'AAP 2022, bilirubin to albumin ratio (two public copies)'
+	},
+	'measure-again': {
+		code: 'measure-at-24-to-48-hours',
+		severity: 'warning',
+		text: 'Every newborn is measured between 24 and 48 hours of age, or before discharge if that is earlier; the last value here is younger.',
+		source: 'AAP 2022 key action statements'
+	},
+	'stopped-early': {
+		code: 'stopped-above-limit',
+		severity: 'warning',
+		text: 'Before stopping, serum was not shown to be at least 2 mg/dL below the line that applied when phototherapy began: rebound is likelier.',
+		source: 'AAP 2022; Pediatrics 2019;144(1):e20183712'
+	},
+	'may-stop': {
+		code: 'may-stop-phototherapy',
+		severity: 'notice',
+		text: 'The last serum value is at least 2 mg/dL below the line that applied when phototherapy began: stopping is an option. Treat longer if rebound is likelier (before 38 weeks, begun before 48 hours, hemolysis).',
+		source: 'AAP 2022; hospital pathway summary'
+	},
+	rebound: {
+		code: 'rebound-likelier',
+		severity: 'notice',
+		text: 'Rebound after stopping is likelier before 38 weeks (10.2 % against 2.5 % when stopped 2 mg/dL below the starting line).',
+		source: 'Chang and Newman, Pediatrics 2019;144(1):e20183712'
+	},
+	'earlier-unconfirmed': {
+		code: 'earlier-transcutaneous-not-confirmed',
+		severity: 'warning',
+		text: 'An earlier transcutaneous value asked for a serum value, and none followed.',
+		source: 'AAP 2022 key action statements'
+	}
+} as const satisfies Record<string, Caution>;
+
+type Made = Omit<Decision, 'cautions'>;
+
+/** What AAP 2022 wants the clinician to see beside the result. */
+export function cautionAap(decision: Made, cautions: Caution[]): void {
+	const { outcome, deciding, case: known } = decision;
+	if (outcome.disposition === 'exchange') cautions.push(CAUTIONS.exchange);
+	if (outcome.disposition === 'exchange' || outcome.disposition === 'escalate')
+		cautions.push(CAUTIONS.escalate);
+	if (outcome.rule === 'zone.phototherapy') cautions.push(CAUTIONS.workup);
+	cautionHome(decision, cautions);
+	if (deciding && ratioReached(decision)) cautions.push(CAUTIONS.ratio);
+	if (
+		deciding &&
+		deciding.ageMs < DAY_MS &&
+		known.dischargeMs > known.bornMs + DAY_MS &&
+		known.treatment.last === null
+	) {
+		cautions.push(CAUTIONS['measure-again']);
+	}
+	if (known.treatment.last) cautionTreatment(decision, cautions);
+	if (decision.readings.length > 1 && hasUnconfirmed(decision))
+		cautions.push(CAUTIONS['earlier-unconfirmed']);
+}
+
+function cautionHome({ outcome, deciding, case: known }: Made, cautions: Caution[]): void {
+	const isNear = outcome.rule === 'figure-7.0.1-1.9';
+	const isOver =
+		outcome.rule === 'zone.phototherapy' && deciding !== null && deciding.atMs > known.dischargeMs;
+	if (isNear) cautions.push(CAUTIONS.options);
+	if (!deciding || (!isNear && !isOver)) return;
+	const isMet =
+		known.weeks >= edition.HOME.fromWeek &&
+		deciding.ageMs >= edition.HOME.fromHours * HOUR_MS &&
+		!known.atRisk &&
+		known.treatment.last === null &&
+		Math.round(deciding.difference * 10) >= -edition.HOME.overLineTenths;
+	cautions.push(isMet ? CAUTIONS['home-possible'] : CAUTIONS['home-not-met']);
+}
+
+/** The cut-off of the bilirubin to albumin ratio for gestational age and risk. */
+export function albuminRatioLimit(weeks: number, atRisk: boolean): number {
+	const { termNoRisk, termRisk, earlyNoRisk, earlyRisk } = edition.ALBUMIN_RATIO;
+	if (weeks >= 38) return atRisk ? termRisk : termNoRisk;
+	return atRisk ? earlyRisk : earlyNoRisk;
+}
+
+/**
+ * Whether bilirubin (mg/dL) to albumin (g/dL) has reached the ratio at which exchange may be considered.
+ * `albuminRatioReached({ total: 24, albumin: 3, weeks: 39, atRisk: false })` is true (8.0).
+ */
+export function albuminRatioReached(known: {
+	total: number;
+	albumin: number;
+	weeks: number;
+	atRisk: boolean;
+}): boolean {
+	return known.total / known.albumin >= albuminRatioLimit(known.weeks, known.atRisk) - 1e-9;
+}
+
+function ratioReached({ deciding, case: known }: Made): boolean {
+	const albumin = known.input.albuminGramsPerDecilitre;
+	if (albumin === undefined || !deciding) return false;
+	return albuminRatioReached({ total: deciding.total, albumin, weeks: known.weeks, atRisk: known.atRisk });
+}
+
+function cautionTreatment({ readings, case: known }: Made, cautions: Caution[]): void {
+	const { last, running, stopMs } = known.treatment;
+	const startMs = last?.from.getTime() ?? NaN;
+	const untilMs = running ? Infinity : stopMs;
+	const serum = lastWhere(readings, (one) => one.serum && one.atMs > startMs && one.atMs <= untilMs);
+	const isLow = serum !== undefined && isBelowStopLimit(serum.total, known, startMs);
+	if (running && isLow) cautions.push(CAUTIONS['may-stop']);
+	if (!running && !isLow) cautions.push(CAUTIONS['stopped-early']);
+	if (!running && known.weeks < 38) cautions.push(CAUTIONS.rebound);
+}
+
+function isBelowStopLimit(total: number, known: Made['case'], startMs: number): boolean {
+	const level = stopLevel(known.weeks, known.atRisk, startMs - known.bornMs);
+	return level !== null && Math.round((level - total) * 10) >= 0;
+}
+
+/**
+ * The value in mg/dL at or below which stopping is an option: 2 mg/dL under the line that applied when
+ * phototherapy began. Null when it began outside the table.
+ */
+export function stopLevel(weeks: number, atRisk: boolean, startAgeMs: number): number | null {
+	if (!(startAgeMs >= FIRST_HOUR * HOUR_MS && startAgeMs <= LAST_HOUR * HOUR_MS)) return null;
+	const line = lines(weeks, atRisk, startAgeMs).phototherapy;
+	return Math.round(line * 10 - edition.STOP_BELOW_START_LINE_TENTHS) / 10;
+}
+
+function hasUnconfirmed({ readings, outcome }: Made): boolean {
+	if (outcome.disposition === 'confirm-serum') return false;
+	const lastSerum = lastWhere(readings, (one) => one.serum);
+	return readings.some(
+		(one, i) =>
+			one.confirm !== null &&
+			one.distrust === null &&
+			i < readings.length - 1 &&
+			(lastSerum === undefined || one.atMs > lastSerum.atMs)
+	);
+}

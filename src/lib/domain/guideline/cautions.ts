@@ -1,0 +1,229 @@
+import { HOUR_MS } from './age';
+import { LOW_ALBUMIN_GRAMS_PER_DECILITRE } from './editions/aap-2022';
+import { isRaisedDirect, liverStatus } from './liver';
+import { exceedsLimit, risePerHour } from './rate';
+import type { Decision, Standard } from './standard';
+import type { Caution, JaundiceRisk } from './types';
+import { valueIn } from './units';
+
+/** The texts are fixed, so that a batch can write them without making them anew; values stand in the trace. */
+const SHARED = {
+	'untrusted-value': {
+		code: 'untrusted-value',
+		severity: 'warning',
+		text: 'At least one value must not be used to decide; it is marked with the reason.',
+		source: 'See the trace'
+	},
+	'check-unit': {
+		code: 'check-unit',
+		severity: 'warning',
+		text: 'A value in µmol/L is so low that it may have been typed from a report in mg/dL. Check the unit.',
+		source: 'common practice, no source'
+	},
+	'rapid-rise': {
+		code: 'rapid-rise',
+		severity: 'danger',
+		text: 'Bilirubin rises faster than the published limit, which suggests hemolysis. Do a direct antiglobulin test if none was done, and look for the cause.',
+		source: 'AAP 2022 key action statements; NICE CG98 (from memory)'
+	},
+	'hearing-test': {
+		code: 'hearing-test',
+		severity: 'warning',
+		text: 'A value reached the exchange line: a risk indicator for later hearing loss. Screen by automated auditory brainstem response and keep monitoring after a pass.',
+		source: 'J Early Hear Detect Interv 2024;9(2); diagnostic follow-up by 9 months from memory (JCIH 2019)'
+	},
+	'direct-raised': {
+		code: 'direct-raised',
+		severity: 'danger',
+		text: 'The direct (conjugated) bilirubin is raised. This asks about the liver and the flow of bile (biliary atresia, hepatitis): prompt referral. It is apart from the treatment lines.',
+		source: 'AAP 2022 and NASPGHAN 2017 (1.0 mg/dL); NICE CG98 (25 µmol/L, from memory)'
+	},
+	'direct-over-half': {
+		code: 'direct-over-half',
+		severity: 'danger',
+		text: 'The direct part is more than half of the total: ask an expert before treating. The total is still held against the lines.',
+		source: 'AAP 2022, one public copy'
+	},
+	'prolonged-due': {
+		code: 'prolonged-due',
+		severity: 'warning',
+		text: 'If still jaundiced at this age: measure total and direct (or conjugated) bilirubin, and ask for pale stools and dark urine.',
+		source: 'AAP 2022 key action statements; NICE CG98, prolonged jaundice'
+	},
+	'low-albumin': {
+		code: 'low-albumin',
+		severity: 'warning',
+		text: 'Albumin is below 3.0 g/dL: more bilirubin is unbound than the number shows. It counts as a neurotoxicity risk factor where the standard has risk curves.',
+		source: 'AAP 2022, neurotoxicity risk factors'
+	},
+	'albumin-differs': {
+		code: 'albumin-differs',
+		severity: 'notice',
+		text: 'Low albumin is listed as a risk, but the value given is 3.0 g/dL or more. The risk was kept; correct whichever is wrong.',
+		source: 'our reading'
+	},
+	'no-lower-line': {
+		code: 'no-lower-line',
+		severity: 'notice',
+		text: 'This standard has no lower lines for neurotoxicity risk factors. Weigh them by clinical judgement.',
+		source: 'NICE CG98, threshold table'
+	},
+	unstable: {
+		code: 'unstable',
+		severity: 'danger',
+		text: 'Sepsis or clinical instability is listed. Follow-up dates are written for newborns who are well enough to go home: review before discharge.',
+		source: 'common practice, no source'
+	},
+	'window-before-discharge': {
+		code: 'window-before-discharge',
+		severity: 'warning',
+		text: 'The window ends before the planned discharge: measure again before the newborn goes home.',
+		source: 'our reading'
+	},
+	'transcutaneous-very-high': {
+		code: 'transcutaneous-very-high',
+		severity: 'danger',
+		text: 'The transcutaneous value is itself at the escalation or exchange line. Take serum at once and prepare treatment meanwhile.',
+		source: 'AAP 2022 and NICE CG98: serum decides; the haste is common practice, no source'
+	}
+} as const satisfies Record<string, Caution>;
+
+const BY_RISK: Partial<Record<JaundiceRisk, Caution>> = {
+	'jaundice-in-first-24-hours': {
+		code: 'jaundice-in-first-24-hours',
+		severity: 'danger',
+		text: 'Jaundice in the first 24 hours is never taken as harmless: measure without delay and look for hemolysis.',
+		source: 'AAP 2022 key action statements; NICE CG98'
+	},
+	'hemolysis-suspected': {
+		code: 'hemolysis-suspected',
+		severity: 'warning',
+		text: 'Hemolysis is suspected: antiglobulin test, blood count, and G6PD activity where ancestry or family history suggests it. Confirmed hemolysis belongs among the neurotoxicity risks.',
+		source: 'AAP 2022'
+	},
+	'family-red-cell-disorder': {
+		code: 'family-red-cell-disorder',
+		severity: 'notice',
+		text: 'Family history or ancestry suggests an inherited red-cell disorder: think of G6PD deficiency when the rise is sudden, late, or goes on under phototherapy.',
+		source: 'AAP 2022'
+	},
+	'scalp-hematoma-or-bruising': {
+		code: 'scalp-hematoma-or-bruising',
+		severity: 'notice',
+		text: 'Blood in a scalp hematoma or bruise is broken down over days: bilirubin may rise later and higher than expected.',
+		source: 'AAP 2022, risk factors; the course is common practice, no source'
+	},
+	'ceftriaxone-or-sulfonamide': {
+		code: 'drug-displaces-bilirubin',
+		severity: 'danger',
+		text: 'Ceftriaxone and sulfonamides displace bilirubin from albumin: avoid them in a newborn with raised bilirubin.',
+		source:
+			'US label of ceftriaxone (secondary copy); a study of 27 term newborns found no displacement (J Pediatr 2023;254:91); sulfonamides: secondary copies'
+	},
+	'lipid-infusion': {
+		code: 'lipid-infusion',
+		severity: 'warning',
+		text: 'Free fatty acids from a lipid infusion compete with bilirubin for albumin: more may be unbound than the number shows.',
+		source: 'common practice, no source'
+	},
+	'exclusive-breastfeeding-low-intake': {
+		code: 'low-intake',
+		severity: 'notice',
+		text: 'Exclusive breastfeeding with low intake: help with feeding and check the weight; do not give water or dextrose water to lower bilirubin.',
+		source: 'AAP 2022 key action statements'
+	}
+};
+
+/** Cautions that do not depend on the standard's own rules. */
+export function cautionShared(
+	decision: Omit<Decision, 'cautions'>,
+	standard: Standard,
+	cautions: Caution[]
+): void {
+	const { input } = decision.case;
+	for (const risk of input.jaundiceRisks) {
+		const caution = BY_RISK[risk];
+		if (caution) cautions.push(caution);
+	}
+	cautionValues(decision, standard, cautions);
+	if (decision.case.lowAlbumin) cautions.push(SHARED['low-albumin']);
+	const albumin = input.albuminGramsPerDecilitre;
+	if (
+		albumin !== undefined &&
+		albumin >= LOW_ALBUMIN_GRAMS_PER_DECILITRE &&
+		input.neurotoxicityRisks.includes('low-albumin')
+	) {
+		cautions.push(SHARED['albumin-differs']);
+	}
+	if (!standard.usesRiskCurves && decision.case.atRisk) cautions.push(SHARED['no-lower-line']);
+	if (
+		input.neurotoxicityRisks.includes('sepsis') ||
+		input.neurotoxicityRisks.includes('clinical-instability')
+	) {
+		cautions.push(SHARED.unstable);
+	}
+	cautionOutcome(decision, cautions);
+	const liver = liverStatus(input, standard);
+	if (liver === 'due' || liver === 'overdue') cautions.push(SHARED['prolonged-due']);
+}
+
+function cautionValues(
+	{ readings }: Omit<Decision, 'cautions'>,
+	standard: Standard,
+	cautions: Caution[]
+): void {
+	let hasUntrusted = false;
+	let reachedExchange = false;
+	let isRaised = false;
+	let isOverHalf = false;
+	let isLow = false;
+	for (const { measurement, distrust, zone, serum, ageMs } of readings) {
+		if (distrust !== null) hasUntrusted = true;
+		if (serum && zone === 'exchange') reachedExchange = true;
+		if (measurement.unit === 'umol/L' && measurement.total < 30 && ageMs >= 12 * HOUR_MS) isLow = true;
+		if (measurement.direct === undefined) continue;
+		const direct = valueIn(measurement.direct, measurement.unit, standard.unit);
+		if (isRaisedDirect(direct, standard)) isRaised = true;
+		if (isRaisedDirect(direct, standard) && measurement.direct * 2 > measurement.total) isOverHalf = true;
+	}
+	if (hasUntrusted) cautions.push(SHARED['untrusted-value']);
+	if (isLow) cautions.push(SHARED['check-unit']);
+	if (hasRapidRise(readings, standard)) cautions.push(SHARED['rapid-rise']);
+	if (reachedExchange) cautions.push(SHARED['hearing-test']);
+	if (isRaised) cautions.push(SHARED['direct-raised']);
+	if (isOverHalf) cautions.push(SHARED['direct-over-half']);
+}
+
+function hasRapidRise(readings: Decision['readings'], standard: Standard): boolean {
+	let before: Decision['readings'][number] | undefined;
+	for (const reading of readings) {
+		if (reading.distrust !== null) continue;
+		if (
+			before &&
+			before.atMs < reading.atMs &&
+			exceedsLimit(risePerHour(before, reading), reading.ageMs, standard)
+		) {
+			return true;
+		}
+		before = reading;
+	}
+	return false;
+}
+
+function cautionOutcome(
+	{ outcome, deciding, case: known }: Omit<Decision, 'cautions'>,
+	cautions: Caution[]
+): void {
+	if (
+		outcome.disposition === 'confirm-serum' &&
+		deciding &&
+		deciding.zone !== 'below' &&
+		deciding.zone !== 'phototherapy'
+	) {
+		cautions.push(SHARED['transcutaneous-very-high']);
+	}
+	const isPlanned = deciding !== null && deciding.atMs <= known.dischargeMs;
+	if (isPlanned && outcome.disposition === 'follow-up' && outcome.untilMs <= known.dischargeMs) {
+		cautions.push(SHARED['window-before-discharge']);
+	}
+}
