@@ -12,7 +12,7 @@ export interface TimeStyle {
 }
 
 function local(at: Date, style: TimeStyle): DateTime {
-	return DateTime.fromJSDate(at, { zone: style.timeZone, locale: style.locale ?? 'en' });
+	return DateTime.fromJSDate(at, { zone: style.timeZone }).setLocale(style.locale ?? 'en');
 }
 
 /** "14:20" for staff, "2:20 PM" (or as the language has it) for a family. */
@@ -48,7 +48,7 @@ export function formatCalendarDate(on: string, locale = 'en'): string {
 
 /** Short name of the zone at that instant, for beside a time field: "CST", "GMT+1". */
 export function formatZone(timeZone: string, at: Date, locale = 'en-US'): string {
-	return DateTime.fromJSDate(at, { zone: timeZone, locale }).offsetNameShort ?? timeZone;
+	return DateTime.fromJSDate(at, { zone: timeZone }).setLocale(locale).offsetNameShort ?? timeZone;
 }
 
 /** Values of a date input and a time input in the site's zone: `{ date: '2026-03-03', time: '14:20' }`. */

@@ -97,7 +97,7 @@ export interface DayMark {
 
 /** Local midnights inside the picture, each with its date; correct over changes of the clock. */
 export function dayMarks(model: HourLineModel, scales: Scales, locale = 'en', every = 1): DayMark[] {
-	const born = DateTime.fromJSDate(model.bornAt, { zone: model.timeZone, locale });
+	const born = DateTime.fromJSDate(model.bornAt, { zone: model.timeZone }).setLocale(locale);
 	const first = born.plus({ hours: model.fromHour });
 	const midnights: DateTime[] = [];
 	for (let day = first.startOf('day'); scales.x(hoursFrom(born, day)) <= 100; day = day.plus({ days: 1 })) {

@@ -1,8 +1,8 @@
-import type { Component } from 'svelte';
+import type { Icon } from '../icon';
 
 export interface MenuItem {
 	readonly label: string;
-	readonly icon?: Component<{ class?: string }>;
+	readonly icon?: Icon;
 	/** A link, or something to do; one of the two. */
 	readonly href?: string;
 	readonly onSelect?: () => void;
