@@ -18,14 +18,28 @@ export default defineConfig({
 		projects: [
 			{
 				extends: true,
-				test: { name: 'unit', environment: 'node', include: ['src/**/*.test.ts', 'tests/arch/**/*.test.ts', 'tests/golden/**/*.test.ts'] }
+				test: {
+					name: 'unit',
+					environment: 'node',
+					include: [
+						'src/**/*.test.ts',
+						'jobs/**/*.test.ts',
+						'tests/arch/**/*.test.ts',
+						'tests/golden/**/*.test.ts'
+					]
+				}
 			},
 			{
 				extends: true,
 				test: {
 					name: 'integration',
 					environment: 'node',
-					include: ['tests/db/**/*.test.ts', 'tests/http/**/*.test.ts', 'tests/crash/**/*.test.ts', 'tests/messaging/**/*.test.ts'],
+					include: [
+						'tests/db/**/*.test.ts',
+						'tests/http/**/*.test.ts',
+						'tests/crash/**/*.test.ts',
+						'tests/messaging/**/*.test.ts'
+					],
 					globalSetup: ['tests/support/global-database.ts'],
 					fileParallelism: false,
 					testTimeout: 60_000,

@@ -37,7 +37,7 @@ export async function buildWeb(root, folder, { signal, onOutput } = {}) {
 	const vite = join(root, 'node_modules', 'vite', 'bin', 'vite.js');
 	const done = await run(process.execPath, [vite, 'build'], {
 		cwd: root,
-		env: { ...process.env, NODE_ENV: 'production', BUILD_DIR: folder },
+		env: { ...process.env, NODE_ENV: 'production', NO_COLOR: '1', BUILD_DIR: folder },
 		signal,
 		onOutput
 	});

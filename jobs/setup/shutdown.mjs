@@ -28,12 +28,27 @@ export class Shutdown {
 		for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
 			process.on(signal, () => {
 				if (this.signal.aborted) this.#killAll();
-				else {
-					console.log('\nStopping …');
-					this.#controller.abort();
-				}
+				else this.#ask();
 			});
 		}
+		this.#watchParent();
+	}
+
+	#ask() {
+		console.log('\nStopping …');
+		this.#controller.abort();
+	}
+
+	/** Under npm, whoever kills npm itself means us too: nothing may go on running unseen. */
+	#watchParent() {
+		if (process.env.npm_lifecycle_event === undefined) return;
+		const parent = process.ppid;
+		const timer = setInterval(() => {
+			if (process.ppid === parent || this.signal.aborted) return;
+			clearInterval(timer);
+			this.#ask();
+		}, 1000);
+		timer.unref();
 	}
 
 	/** @returns {Promise<void>} */

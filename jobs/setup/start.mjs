@@ -30,7 +30,8 @@ const remarks = [];
 const remark = (/** @type {string} */ sentence) => remarks.push(sentence);
 
 function printRemarks() {
-	for (const sentence of remarks.splice(0)) console.log(`\n${sentence.replaceAll(/^/gm, '    ')}\n`);
+	if (remarks.length === 0) return;
+	console.log(`\n${remarks.splice(0).join('\n').replaceAll(/^/gm, '    ')}\n`);
 }
 
 /** @template T @param {string} title @param {(note: (text: string) => void) => Promise<T>} work */

@@ -113,14 +113,14 @@ export default typescript.config(
 		rules: { 'no-console': 'off' }
 	},
 	{
-		files: ['**/*.cjs'],
-		languageOptions: { sourceType: 'commonjs' },
-		...typescript.configs.disableTypeChecked
+		// Outside every tsconfig: plain configuration, linted without types.
+		...typescript.configs.disableTypeChecked,
+		files: ['*.{js,cjs}', '.*.cjs', '*.config.ts', 'tests/lint/*'],
+		languageOptions: { parserOptions: { projectService: false } }
 	},
 	{
-		// Outside every tsconfig: plain configuration, linted without types.
-		files: ['*.js', '*.cjs', '.*.cjs', '*.config.ts', 'tests/lint/*.js'],
-		...typescript.configs.disableTypeChecked,
-		languageOptions: { parserOptions: { projectService: false } }
+		files: ['**/*.cjs', '**/.*.cjs'],
+		languageOptions: { sourceType: 'commonjs' },
+		rules: { '@typescript-eslint/no-require-imports': 'off' }
 	}
 );
