@@ -1,5 +1,4 @@
 import { DateTime } from 'luxon';
-import type { Stage } from '../followup/states';
 import type { Feeding } from '../guideline/types';
 import { addressed, firstReachable } from './plan-carers';
 import {
@@ -9,7 +8,8 @@ import {
 	type PlannedMessage,
 	PRIORITY
 } from './plan-facts';
-import { isQuiet, lastAllowedBefore, nextAllowed, type QuietHours } from './quiet-hours';
+import { ASKING_STAGES } from './plan-stages';
+import { lastAllowedBefore, nextAllowed, type QuietHours } from './quiet-hours';
 
 const HOUR = 3_600_000;
 /** Local time of the morning question; common practice, no source. */
@@ -18,7 +18,6 @@ const ASK_HOUR = 9;
 const DAILY_DAYS = 7;
 /** On the day of the visit the question must leave time for an answer to matter. */
 const BEFORE_VISIT_HOURS = 3;
-const ASKING_STAGES: readonly Stage[] = ['to-book', 'booked', 'confirmed', 'missed'];
 
 /** The daily questions until the visit, those of the prolonged-jaundice rule, and the answers received. */
 export function planCheckIns(facts: PlanFacts): PlannedMessage[] {
@@ -127,6 +126,3 @@ function received(facts: PlanFacts, first: PlanCarer): PlannedMessage[] {
 		});
 	});
 }
-
-/** True where nothing holds a message back at that instant; for the tests of the plan. */
-export const isAllowedAt = (at: Date, facts: PlanFacts): boolean => !isQuiet(at, quietOf(facts));

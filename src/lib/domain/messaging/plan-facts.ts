@@ -50,6 +50,8 @@ export interface PlanFacts {
 	readonly windowFromAt: Date | null;
 	readonly windowUntilAt: Date | null;
 	readonly laterCheckAt: Date | null;
+	/** The last attempt that reached the family. */
+	readonly lastReachedAt: Date | null;
 	readonly timeZone: string;
 	readonly policy: SitePolicy;
 	readonly carers: readonly PlanCarer[];

@@ -1,20 +1,9 @@
-import type { SitePolicy } from '../followup/policy';
+import { rungDueAt } from '../followup/ladder';
 import { addressed, firstReachable, secondReachable } from './plan-carers';
 import { type PlanFacts, type PlannedMessage, type PlanVisit, PRIORITY } from './plan-facts';
 import { nextAllowed } from './quiet-hours';
 
-const MINUTE = 60_000;
-const HOUR = 60 * MINUTE;
-
-/**
- * Minutes between two rungs of the ladder: the site's own for a window longer than 48 h, three quarters of it up to 48 h,
- * half of it up to 24 h (common practice, no source: spacing shrinks with the window).
- */
-export function rungMinutes(policy: Pick<SitePolicy, 'ladderMinutes'>, windowHours: number | null): number {
-	if (windowHours !== null && windowHours <= 24) return policy.ladderMinutes * 0.5;
-	if (windowHours !== null && windowHours <= 48) return policy.ladderMinutes * 0.75;
-	return policy.ladderMinutes;
-}
+const HOUR = 3_600_000;
 
 /**
  * The messages of the ladder for a family that did not come: the first carer in the same hour; after the first call, the
@@ -37,15 +26,28 @@ export function planMissed(facts: PlanFacts): PlannedMessage[] {
 		priority: PRIORITY.urgent,
 		runAt: missedAt
 	});
-	return [...atOnce, ...again(facts, missedAt, common)];
+	return [...atOnce, ...again(facts, visit, common)];
+}
+
+const later = (a: Date, b: Date): Date => (a > b ? a : b);
+
+/** The ladder's own time for the second carer; the rungs are counted from the start of the missed visit. */
+function secondMessageAt({ policy, windowFromAt, windowUntilAt }: PlanFacts, visit: PlanVisit): Date {
+	const window =
+		windowFromAt && windowUntilAt
+			? { from: windowFromAt, until: windowUntilAt, test: 'judgement' as const }
+			: null;
+	return rungDueAt('message-second-carer', { since: visit.startsAt, policy, window });
 }
 
 function again(
 	facts: PlanFacts,
-	missedAt: Date,
+	visit: PlanVisit,
 	common: Pick<PlannedMessage, 'occasion' | 'expiresAt' | 'facts'>
 ): PlannedMessage[] {
-	const wanted = new Date(missedAt.getTime() + 2 * rungMinutes(facts.policy, windowHours(facts)) * MINUTE);
+	const missedAt = visit.endedAt ?? visit.startsAt;
+	if (facts.lastReachedAt !== null && facts.lastReachedAt >= missedAt) return [];
+	const wanted = later(secondMessageAt(facts, visit), missedAt);
 	const allowed = nextAllowed(wanted, { timeZone: facts.timeZone, ...facts.policy });
 	// Waiting for the morning is right only while the morning still lies inside the window.
 	const isUrgent = facts.windowUntilAt !== null && allowed > facts.windowUntilAt;
@@ -67,8 +69,4 @@ function lastMissed(visits: readonly PlanVisit[]): PlanVisit | undefined {
 	return visits
 		.filter(({ state }) => state === 'missed')
 		.sort((a, b) => b.startsAt.getTime() - a.startsAt.getTime())[0];
-}
-
-function windowHours({ windowFromAt, windowUntilAt }: PlanFacts): number | null {
-	return windowFromAt && windowUntilAt ? (windowUntilAt.getTime() - windowFromAt.getTime()) / HOUR : null;
 }

@@ -1,10 +1,10 @@
-import type { Outcome } from '../followup/states';
 import type { MessageKind } from './kinds';
 import { addressed, firstReachable } from './plan-carers';
 import { planCheckIns } from './plan-check-ins';
 import type { PlanFacts, PlannedMessage } from './plan-facts';
 import { PRIORITY } from './plan-facts';
 import { planMissed } from './plan-missed';
+import { SILENT_OUTCOMES } from './plan-stages';
 import { planVisits } from './plan-visits';
 import { nextAllowed } from './quiet-hours';
 
@@ -23,9 +23,6 @@ export const DERIVED_KINDS: readonly MessageKind[] = [
 	'other-time-received',
 	'follow-up-closed'
 ];
-
-/** After these a message of ours could only hurt or confuse: nothing is planned and all that waits is withdrawn. */
-const SILENT_OUTCOMES: readonly Outcome[] = ['died', 'entered-twice', 'not-reached'];
 
 const HOUR = 3_600_000;
 

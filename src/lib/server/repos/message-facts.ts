@@ -1,6 +1,6 @@
-import { asc, eq, inArray } from 'drizzle-orm';
+import { and, asc, eq, inArray, max } from 'drizzle-orm';
 import type { Reader, Tx } from '../db/client';
-import { checkIns, followUps, visits } from '../db/schema/follow-up';
+import { attempts, checkIns, followUps, visits } from '../db/schema/follow-up';
 import { carers, newborns } from '../db/schema/newborn';
 import { sites } from '../db/schema/organisation';
 
@@ -16,7 +16,7 @@ export async function lockFollowUp(tx: Tx, followUpId: string): Promise<FollowUp
 	return rows[0] ?? null;
 }
 
-/** What the plan of one follow-up reads, in four queries. */
+/** What the plan of one follow-up reads, in five queries. */
 export async function loadPlanRows(db: Reader, followUp: FollowUpRow) {
 	const [head] = await db
 		.select({ newborn: newborns, clinic: sites })
@@ -42,7 +42,14 @@ export async function loadPlanRows(db: Reader, followUp: FollowUpRow) {
 		})
 		.from(checkIns)
 		.where(eq(checkIns.followUpId, followUp.id));
-	return head ? { ...head, carers: carerRows, visits: visitRows, checkIns: checkInRows } : null;
+	const [reached] = await db
+		.select({ at: max(attempts.at) })
+		.from(attempts)
+		.where(and(eq(attempts.followUpId, followUp.id), eq(attempts.outcome, 'reached')));
+	const lastReachedAt = reached?.at ?? null;
+	return head
+		? { ...head, carers: carerRows, visits: visitRows, checkIns: checkInRows, lastReachedAt }
+		: null;
 }
 
 /** Follow-ups with anything about the newborn's clinic, for many messages at once. */

@@ -12,6 +12,7 @@ import {
 	type MessageRow,
 	type NewMessage
 } from '../repos/messages';
+import { ensureParentLinks } from './parent-links';
 
 /** Which channels are open to a carer now. */
 export const canSms = (carer: CarerRow): boolean =>
@@ -32,6 +33,7 @@ export async function replanMessages(tx: Tx, ctx: Ctx, followUpId: string): Prom
 	if (facts === null) return;
 	const now = ctx.clock.now();
 	const plan = planMessages(facts, now);
+	await ensureParentLinks(tx, ctx, followUp, [...new Set(plan.map(({ carerId }) => carerId))]);
 	await addOrUpdate(tx, ctx, { followUp, plan, existing, now });
 	await withdrawMessages(tx, noLongerHolds(plan, existing), 'no longer holds', now);
 }
@@ -56,6 +58,7 @@ export async function loadPlanFacts(
 		windowFromAt: followUp.windowFromAt,
 		windowUntilAt: followUp.windowUntilAt,
 		laterCheckAt: followUp.laterCheckAt,
+		lastReachedAt: rows.lastReachedAt,
 		timeZone: rows.clinic.timeZone,
 		policy: rows.clinic.policy,
 		carers: rows.carers.map((carer) => ({ ...carer, canSms: canSms(carer), canMail: canMail(carer) })),
