@@ -1,7 +1,7 @@
 import { mkdtempSync, readFileSync, rmSync, writeFileSync, existsSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterEach, describe, expect, test } from 'vitest';
+import { afterAll, afterEach, describe, expect, test } from 'vitest';
 import { judgeLock, takeLock } from './lock.mjs';
 import { startTicks } from './processes.mjs';
 
@@ -45,6 +45,7 @@ describe('taking the lock', () => {
 	const folder = mkdtempSync(join(tmpdir(), 'fadewell-lock-'));
 	const path = join(folder, 'start.lock');
 	afterEach(() => rmSync(path, { force: true }));
+	afterAll(() => rmSync(folder, { recursive: true }));
 
 	test('is refused while this very process holds it, and works again after the release', () => {
 		const first = takeLock(path);

@@ -33,10 +33,11 @@ export function jobCommand(root, file) {
 /**
  * Runs a job that ends by itself.
  * @param {Place} place @param {string} file @param {string} doing What it does, for the message when it fails.
+ * @param {string[]} [options] For the job itself.
  */
-export async function runJob(place, file, doing) {
+export async function runJob(place, file, doing, options = []) {
 	const { command, args, env } = jobCommand(place.root, file);
-	const done = await run(command, args, {
+	const done = await run(command, [...args, ...options], {
 		cwd: place.root,
 		env: { ...process.env, ...place.variables, ...env }
 	});
