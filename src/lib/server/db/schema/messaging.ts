@@ -99,8 +99,6 @@ export const messages = mysqlTable(
 		unprovenSince: instant(),
 		/** The fallback was planned; set once. */
 		fellBackAt: instant(),
-		/** The message that this one steps in for; the plan leaves such rows alone. */
-		fallbackOfId: recordId(),
 		createdAt: instant().notNull(),
 		updatedAt: instant().notNull()
 	},
@@ -181,12 +179,16 @@ export const workers = mysqlTable('workers', {
 	stoppedAt: instant()
 });
 
-/** The last run of each periodic job, so that a tick missed while every process was down is made up. */
+/** The last run of each periodic job: one process at a time, and a run missed while every process was down is made up. */
 export const ticks = mysqlTable('ticks', {
 	name: asciiWord({ length: 40 }).primaryKey(),
-	lastRunAt: datetime({ mode: 'date', fsp: 3 }).notNull(),
+	/** When the last run began. */
+	lastRunAt: instant().notNull(),
 	lastTookMilliseconds: int(),
-	lastError: varchar({ length: 300 })
+	lastError: varchar({ length: 300 }),
+	/** The process at work on it, until its lease ends by the database's clock. */
+	lockedBy: asciiWord({ length: 60 }),
+	lockedUntil: instant()
 });
 
 /** What the watch found and has not seen settled. */
