@@ -24,6 +24,13 @@ declare global {
 			/** Finds the cause in the log; absent where nothing broke. */
 			errorId?: string;
 		}
+		namespace Superforms {
+			/** What a form answers beside its fields: something was done, or was refused and why. */
+			interface Message {
+				readonly tone: 'done' | 'refused';
+				readonly text: string;
+			}
+		}
 	}
 }
 

@@ -3,7 +3,8 @@ import { textDirection } from '$lib/domain/messaging/language';
 import { appContext, closeAppContext } from '$lib/server/app-context';
 import { decideAccess, needOf } from '$lib/server/auth/route-access';
 import { readSession, sessionCookieName } from '$lib/server/auth/session';
-import { describeFailure } from '$lib/server/http/failure';
+import { setSessionCookie } from '$lib/server/http/cookies';
+import { describeFailure } from '$lib/server/failure';
 import { isForged } from '$lib/server/http/forgery';
 import { protectHeaders } from '$lib/server/http/headers';
 import { refuse, sendToSignIn } from '$lib/server/http/refusal';
@@ -57,12 +58,7 @@ const findActor: Handle = async ({ event, resolve }) => {
 		if (session.state === 'half') event.locals.pendingStaffId = session.staffId;
 		if (session.state === 'signed-in') {
 			event.locals.actor = session.actor;
-			if (session.cookie) {
-				event.cookies.set(session.cookie.name, session.cookie.value, {
-					...session.cookie.attributes,
-					path: '/'
-				});
-			}
+			if (session.cookie) setSessionCookie(event.cookies, session.cookie);
 		}
 	}
 	return resolve(event);

@@ -2,12 +2,9 @@ import { z } from 'zod';
 import type { SitePolicy } from '../domain/followup/policy';
 
 const hours = (most: number) =>
-	z.coerce
-		.number('Type a number.')
-		.min(0.25, 'At least a quarter of an hour.')
-		.max(most, `At most ${most} hours.`);
+	z.number('Type a number.').min(0.25, 'At least a quarter of an hour.').max(most, `At most ${most} hours.`);
 const minutes = (least: number, most: number) =>
-	z.coerce
+	z
 		.number('Type a number.')
 		.int('Whole minutes.')
 		.min(least, `At least ${least} minutes.`)
@@ -30,7 +27,7 @@ export const policySchema = z
 		climbMinutes: minutes(5, 240),
 		quietFrom: clock,
 		quietUntil: clock,
-		quietDays: z.array(z.coerce.number().int().min(1).max(7)),
+		quietDays: z.array(z.number().int().min(1).max(7)),
 		smsUndeliveredMinutes: minutes(5, 240),
 		ladderMinutes: minutes(10, 720),
 		firstDuty: staffId,

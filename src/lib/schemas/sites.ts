@@ -3,16 +3,17 @@ import { IANAZone } from 'luxon';
 import { z } from 'zod';
 import { VISIT_KINDS } from '../domain/followup/visit';
 
-/** A telephone number as typed, in the form it is stored in (E.164). Numbers without a country are read as US. */
-export const phone = z
+/** A telephone number as typed, in the form it is stored in (E.164); null where it is none. Without a country: US. */
+export function storedPhone(typed: string): string | null {
+	const number = parsePhoneNumberFromString(typed, 'US');
+	return number?.isPossible() ? number.number.toString() : null;
+}
+
+const phone = z
 	.string()
 	.trim()
-	.transform((typed, check) => {
-		const number = parsePhoneNumberFromString(typed, 'US');
-		if (number?.isPossible()) return number.number.toString();
-		check.addIssue({ code: 'custom', message: 'This is not a telephone number.' });
-		return z.NEVER;
-	});
+	.min(1, 'Type the telephone number.')
+	.refine((typed) => storedPhone(typed) !== null, 'This is not a telephone number.');
 
 const words = (most: number, ask: string) =>
 	z.string().trim().min(1, ask).max(most, `At most ${most} characters.`);
@@ -41,12 +42,12 @@ export const minutesOf = (time: string): number => Number(time.slice(0, 2)) * 60
 
 export const openingSchema = z
 	.object({
-		weekday: z.coerce.number().int().min(1, 'Choose a day.').max(7, 'Choose a day.'),
+		weekday: z.number().int().min(1, 'Choose a day.').max(7, 'Choose a day.'),
 		from: clock,
 		until: clock,
 		visitKind: z.enum(VISIT_KINDS, 'Choose a kind of visit.'),
-		placeMinutes: z.coerce.number().int().min(5, 'At least 5 minutes.').max(240, 'At most 240 minutes.'),
-		placesAtOnce: z.coerce.number().int().min(1, 'At least 1.').max(20, 'At most 20.')
+		placeMinutes: z.number().int().min(5, 'At least 5 minutes.').max(240, 'At most 240 minutes.'),
+		placesAtOnce: z.number().int().min(1, 'At least 1.').max(20, 'At most 20.')
 	})
 	.refine((opening) => opening.from < opening.until, {
 		path: ['until'],

@@ -1,4 +1,5 @@
-import { and, asc, count, desc, eq, gte, inArray, isNull, lte, min, or } from 'drizzle-orm';
+import { and, asc, count, desc, eq, gte, inArray, isNull, lte, min, or, sql } from 'drizzle-orm';
+import { z } from 'zod';
 import type { Channel, MessageKind, MessageState } from '../../domain/messaging/kinds';
 import type { Reader } from '../db/client';
 import { messages, senders, ticks, watchFindings, workers } from '../db/schema/messaging';
@@ -107,4 +108,11 @@ export async function countOpenFindings(db: Reader): Promise<number> {
 		.from(watchFindings)
 		.where(isNull(watchFindings.settledAt));
 	return row?.count ?? 0;
+}
+
+/** When the newest migration that the database has was made (milliseconds since 1970); null without any. */
+export async function newestMigration(db: Reader): Promise<number | null> {
+	const [rows] = await db.execute(sql`select max(created_at) as newest from __drizzle_migrations`);
+	const parsed = z.array(z.object({ newest: z.coerce.number().nullable() })).safeParse(rows);
+	return parsed.success ? (parsed.data[0]?.newest ?? null) : null;
 }

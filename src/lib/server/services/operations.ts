@@ -1,11 +1,14 @@
+import journal from '../../../../drizzle/meta/_journal.json';
 import type { StaffActor } from '../../domain/access/roles';
 import type { MessageState } from '../../domain/messaging/kinds';
 import type { Ctx } from '../context';
+import { describeFailure } from '../failure';
 import {
 	countMessages,
 	countOpenFindings,
 	dueMessages,
 	lastHeardAt,
+	newestMigration,
 	listDeadMessages,
 	listOpenFindings,
 	listTicks,
@@ -95,4 +98,16 @@ export async function getHealth(ctx: Ctx): Promise<Health> {
 		oldestDueSeconds: due.oldestAt === null ? 0 : secondsSince(due.oldestAt),
 		messagesDead: byState.find(({ state }) => state === 'dead')?.count ?? 0
 	};
+}
+
+/** Whether the database answers and has every migration that this version was built with. */
+export async function isDatabaseReady(ctx: Ctx): Promise<boolean> {
+	const wanted = Math.max(...journal.entries.map(({ when }) => when));
+	try {
+		const newest = await newestMigration(ctx.db);
+		return newest !== null && newest >= wanted;
+	} catch (error) {
+		ctx.log.warn({ failure: describeFailure(error) }, 'the database is not ready');
+		return false;
+	}
 }
