@@ -21,6 +21,15 @@ const SOCKET_PATH_LIMIT = 107;
 const STAMP = '.complete';
 /** Present until the tables and the demo have been put in for the first time; until then nobody has worked in it. */
 const UNFILLED = '.unfilled';
+/** How the product expects its database to behave, wherever it runs: instants in UTC, texts in full Unicode. */
+export const SERVER_SETTINGS = Object.freeze([
+	`--bind-address=${LOOPBACK}`,
+	'--skip-name-resolve',
+	'--character-set-server=utf8mb4',
+	'--collation-server=utf8mb4_unicode_ci',
+	'--default-time-zone=+00:00',
+	'--innodb-buffer-pool-size=128M'
+]);
 export const DATABASE_NAME = 'fadewell';
 export const DATABASE_USER = 'fadewell';
 
@@ -138,14 +147,9 @@ export async function startMariadb({ base, port, extra = [] }) {
 			`--datadir=${join(base, 'data')}`,
 			`--socket=${socket}`,
 			`--port=${port}`,
-			`--bind-address=${LOOPBACK}`,
 			`--pid-file=${join(base, 'mariadb.pid')}`,
 			`--tmpdir=${tmp}`,
-			'--skip-name-resolve',
-			'--character-set-server=utf8mb4',
-			'--collation-server=utf8mb4_unicode_ci',
-			'--default-time-zone=+00:00',
-			'--innodb-buffer-pool-size=128M',
+			...SERVER_SETTINGS,
 			...extra
 		],
 		env: withSbin(),
