@@ -24,7 +24,8 @@ export const actions: Actions = {
 		if (!form.valid) return fail(422, { form });
 		const { ctx, sessionId: oldSessionId } = locals;
 		const result = await signIn(ctx, { email, password, address: getClientAddress(), oldSessionId });
-		if (!result.ok) return message(form, { tone: 'refused', text: sentence(result.error) }, answer(result.error));
+		if (!result.ok)
+			return message(form, { tone: 'refused', text: sentence(result.error) }, answer(result.error));
 		setSessionCookie(cookies, result.value.cookie);
 		const next = safeNext(url.searchParams.get('next'));
 		redirect(303, result.value.needsCode ? `/sign-in/code?next=${encodeURIComponent(next)}` : next);
