@@ -52,13 +52,3 @@ export async function loadPlanRows(db: Reader, followUp: FollowUpRow) {
 		: null;
 }
 
-/** Follow-ups with anything about the newborn's clinic, for many messages at once. */
-export async function listFollowUpsOfMessages(db: Reader, followUpIds: readonly string[]) {
-	if (followUpIds.length === 0) return [];
-	return db
-		.select({ followUp: followUps, newborn: newborns, clinic: sites })
-		.from(followUps)
-		.innerJoin(newborns, eq(newborns.id, followUps.newbornId))
-		.innerJoin(sites, eq(sites.id, followUps.clinicId))
-		.where(inArray(followUps.id, [...followUpIds]));
-}

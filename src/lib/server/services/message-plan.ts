@@ -133,7 +133,7 @@ function toRow(
 
 /**
  * Waiting messages of a derived kind that the plan no longer asks for. One that goes to another channel or carer in place
- * of a message that did not arrive (`facts.insteadOf`) holds as long as its kind and occasion do.
+ * of a message that did not arrive (`fallbackOfId`) holds as long as its kind and occasion do.
  */
 function noLongerHolds(plan: readonly PlannedMessage[], existing: readonly MessageRow[]): string[] {
 	const keys = new Set(plan.map(({ dedupeKey }) => dedupeKey));
