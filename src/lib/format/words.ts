@@ -1,7 +1,7 @@
 import type { AlertKind } from '../domain/followup/alert';
 import type { NextStepKind, Outcome, Stage } from '../domain/followup/states';
 import type { VisitKind, VisitState } from '../domain/followup/visit';
-import type { CheckInResult, Feeding, JaundiceRisk, NeurotoxicityRisk } from '../domain/guideline/types';
+import type { CheckInResult, Feeding } from '../domain/guideline/types';
 
 /** The staff's words for the vocabulary of the core; one place, so that every screen says the same. */
 export const STAGE_WORDS: Record<Stage, string> = {
@@ -76,27 +76,3 @@ export const CHECK_IN_WORDS: Record<CheckInResult, string> = {
 };
 
 export const FEEDING_WORDS: Record<Feeding, string> = { breast: 'Breast', formula: 'Formula', mixed: 'Both' };
-
-export const NEUROTOXICITY_RISK_WORDS: Record<NeurotoxicityRisk, string> = {
-	'isoimmune-hemolysis': 'Isoimmune hemolytic disease',
-	'g6pd-deficiency': 'G6PD deficiency',
-	'other-hemolysis': 'Other hemolytic condition',
-	sepsis: 'Sepsis',
-	'clinical-instability': 'Clinical instability in the previous 24 h',
-	'low-albumin': 'Albumin below 3.0 g/dL'
-};
-
-export const JAUNDICE_RISK_WORDS: Record<JaundiceRisk, string> = {
-	'jaundice-in-first-24-hours': 'Jaundice in the first 24 h',
-	'predischarge-bilirubin-near-threshold': 'Value before discharge close to the threshold',
-	'hemolysis-suspected': 'Hemolysis known or suspected, or rapid rise',
-	'phototherapy-before-discharge': 'Phototherapy before discharge',
-	'sibling-or-parent-treated': 'Parent or sibling needed phototherapy or exchange',
-	'family-red-cell-disorder': 'Family or ancestry suggests an inherited red cell disorder',
-	'exclusive-breastfeeding-low-intake': 'Exclusive breastfeeding with low intake',
-	'scalp-hematoma-or-bruising': 'Scalp hematoma or marked bruising',
-	'down-syndrome': 'Down syndrome',
-	'macrosomia-maternal-diabetes': 'Large newborn of a mother with diabetes',
-	'ceftriaxone-or-sulfonamide': 'Ceftriaxone or a sulfonamide given',
-	'lipid-infusion': 'Lipid infusion'
-};
