@@ -1,10 +1,12 @@
 import { spawn } from 'node:child_process';
-import { existsSync } from 'node:fs';
+import { existsSync, mkdtempSync, rmSync } from 'node:fs';
+import { tmpdir } from 'node:os';
 import { join, resolve } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { readDotEnv, readVariables } from './environment.mjs';
+import { localVariables, readDotEnv, readVariables } from './environment.mjs';
 import { describe, Explained } from './explained.mjs';
-import { accepts, LOOPBACK } from './ports.mjs';
+import { accepts, choosePorts, LOOPBACK } from './ports.mjs';
+import { makeSecrets } from './secrets.mjs';
 import { jobCommand, runJob } from './stack.mjs';
 import { openTemporaryDatabase } from './temporary-database.mjs';
 
@@ -21,16 +23,24 @@ const [file, ...args] = ownDatabase ? given.slice(1) : given;
 
 /** @returns {Promise<{ variables: Record<string, string>, close: () => Promise<void> }>} */
 async function settings() {
+	if (ownDatabase) return ownSettings();
 	const saved = { ...readVariables(join(root, '.data', 'env')), ...readDotEnv(root) };
-	if (ownDatabase) {
-		const database = await openTemporaryDatabase({ durable: true });
-		const variables = { ...saved, DATABASE_URL: database.url };
-		await runJob({ root, logs: root, variables }, 'jobs/migrate.ts', 'Migrating');
-		return { variables, close: database.close };
-	}
 	for (const [name, value] of Object.entries(process.env)) if (value !== undefined) saved[name] = value;
 	await checkDatabase(saved.DATABASE_URL);
 	return { variables: saved, close: async () => {} };
+}
+
+async function ownSettings() {
+	const database = await openTemporaryDatabase({ durable: true });
+	const dataDir = mkdtempSync(join(tmpdir(), 'fadewell-job-'));
+	const local = localVariables({ ports: choosePorts({}), secrets: makeSecrets(), dataDir });
+	const variables = { ...local, DATABASE_URL: database.url };
+	await runJob({ root, logs: dataDir, variables }, 'jobs/migrate.ts', 'Migrating');
+	const close = async () => {
+		await database.close();
+		rmSync(dataDir, { recursive: true, force: true });
+	};
+	return { variables, close };
 }
 
 /** @param {string | undefined} url */

@@ -128,10 +128,10 @@ function give(path, account) {
 
 /**
  * Starts a private MariaDB on 127.0.0.1 with its data in `base`, and waits until it answers. `prepareData` comes first.
- * @param {{ base: string, port: number, extra?: string[] }} options
+ * @param {{ base: string, port: number, extra?: string[], sharesGroup?: boolean }} options `sharesGroup`: see startService.
  * @returns {Promise<PrivateDatabase>}
  */
-export async function startMariadb({ base, port, extra = [] }) {
+export async function startMariadb({ base, port, extra = [], sharesGroup = false }) {
 	const account = serverAccount();
 	const tmp = join(base, 'tmp');
 	mkdirSync(tmp, { recursive: true });
@@ -154,7 +154,8 @@ export async function startMariadb({ base, port, extra = [] }) {
 		],
 		env: withSbin(),
 		cwd: '/',
-		logFile
+		logFile,
+		sharesGroup
 	});
 	const problem = await waitUntil(() => accepts(port), {
 		timeoutMs: 120_000,

@@ -13,14 +13,15 @@ import { setTimeout as pause } from 'node:timers/promises';
 
 /**
  * Starts a long-running child in a process group of its own, so that Ctrl-C in the terminal reaches only us and we
- * stop the children in our order. Its output goes to `logFile`.
- * @param {{ name: string, command: string, args: string[], env?: NodeJS.ProcessEnv, cwd?: string, logFile: string, stopSignal?: NodeJS.Signals }} options
+ * stop the children in our order. With `sharesGroup` it stays in ours and cannot outlive a group that is killed: for
+ * tests. Its output goes to `logFile`.
+ * @param {{ name: string, command: string, args: string[], env?: NodeJS.ProcessEnv, cwd?: string, logFile: string, sharesGroup?: boolean }} options
  * @returns {Promise<Service>}
  * @throws Error when the command cannot be started at all.
  */
-export async function startService({ name, command, args, env, cwd, logFile, stopSignal = 'SIGTERM' }) {
+export async function startService({ name, command, args, env, cwd, logFile, sharesGroup = false }) {
 	const log = openSync(logFile, 'a', 0o600);
-	const child = spawn(command, args, { env, cwd, detached: true, stdio: ['ignore', log, log] });
+	const child = spawn(command, args, { env, cwd, detached: !sharesGroup, stdio: ['ignore', log, log] });
 	closeSync(log);
 	let running = true;
 	/** @type {Promise<string>} */
@@ -41,10 +42,10 @@ export async function startService({ name, command, args, env, cwd, logFile, sto
 		isRunning: () => running,
 		stop: async (graceMs = 15_000) => {
 			if (!running) return;
-			signalQuietly(pid, stopSignal);
+			signalQuietly(pid, 'SIGTERM');
 			const inTime = await Promise.race([ended.then(() => true), pause(graceMs, false, { ref: false })]);
 			if (inTime) return;
-			signalQuietly(-pid, 'SIGKILL');
+			signalQuietly(sharesGroup ? pid : -pid, 'SIGKILL');
 			await ended;
 		}
 	};

@@ -10,6 +10,7 @@ import { run, startService, tail, waitUntil } from './processes.mjs';
  * @property {string} root The top of the project.
  * @property {string} logs Folder for the services' logs.
  * @property {Record<string, string>} variables See environment.mjs.
+ * @property {boolean} [sharesGroup] See startService.
  */
 
 const READY_MS = 60_000;
@@ -86,7 +87,8 @@ export async function startWeb(place, what) {
 		args,
 		cwd: root,
 		env: { ...process.env, ...variables, NODE_ENV: mode },
-		logFile
+		logFile,
+		sharesGroup: place.sharesGroup
 	});
 	await untilReady(place, service, () => answersOk(`http://${LOOPBACK}:${variables.PORT}/health/ready`));
 	return service;
@@ -101,7 +103,8 @@ async function startJob(place, name, file) {
 		args,
 		cwd: place.root,
 		env: { ...process.env, ...place.variables, ...env, NODE_ENV: 'production' },
-		logFile: freshLog(place.logs, name)
+		logFile: freshLog(place.logs, name),
+		sharesGroup: place.sharesGroup
 	});
 }
 

@@ -200,6 +200,10 @@ async function main() {
 	}
 }
 
+// A terminal that was closed must not keep us from stopping what was started.
+process.stdout.on('error', () => {});
+process.stderr.on('error', () => {});
+
 try {
 	await main();
 	console.log('Stopped. The data are kept.');

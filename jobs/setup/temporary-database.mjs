@@ -30,7 +30,7 @@ export async function openTemporaryDatabase({ durable = false } = {}) {
 		const [port = 0] = await freePorts(1);
 		const password = randomBytes(18).toString('base64url');
 		await prepareData(base);
-		const database = await startMariadb({ base, port, extra: durable ? [] : FAST });
+		const database = await startMariadb({ base, port, extra: durable ? [] : FAST, sharesGroup: true });
 		await ensureAccount(database, { password, everyDatabase: true });
 		const close = async () => {
 			await database.stop();

@@ -46,7 +46,7 @@ export async function openTemporaryStack({ root, build, demo = true, worker = tr
 			DATABASE_URL: database.url,
 			DEMO: demo ? '1' : '0'
 		};
-		const place = { root, logs: dataDir, variables };
+		const place = { root, logs: dataDir, variables, sharesGroup: true };
 		await runJob(place, 'jobs/migrate.ts', 'Migrating');
 		// Always open: a test must find a free place at whatever hour and on whatever day it runs.
 		if (demo) await runJob(place, 'jobs/demo.ts', 'Loading the demo', ['--always-open']);

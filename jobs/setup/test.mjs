@@ -117,7 +117,7 @@ function printSummary(results) {
 for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
 	process.on(signal, () => {
 		// The step's own process first: it stops the database and the servers that it started.
-		if (current?.pid !== undefined) signalQuietly(current.pid, 'SIGTERM');
+		if (current?.pid !== undefined) signalQuietly(current.pid, 'SIGINT');
 		console.log('\nStopped.');
 		setTimeout(() => process.exit(130), 5000);
 		current?.once('exit', () => process.exit(130));
