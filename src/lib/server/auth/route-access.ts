@@ -64,8 +64,18 @@ export const ROUTE_ACCESS: Readonly<Record<string, RouteAccess>> = {
 	'/(staff)/morning': page('queue.view'),
 	'/(staff)/waiting': page('waiting.view'),
 
-	'/(staff)/follow-ups/[followUpId]': page('follow-up.view'),
-	'/(staff)/follow-ups/[followUpId]/summary': page('follow-up.view'),
+	'/(staff)/follow-ups/[followUpId]': page('follow-up.view', {
+		value: 'values.record',
+		strike: 'values.record',
+		accept: 'follow-up.decide',
+		decide: 'follow-up.decide',
+		endTreatment: 'follow-up.decide',
+		close: 'follow-up.decide',
+		reopen: 'follow-up.decide',
+		merge: 'follow-up.decide',
+		settle: 'alert.settle'
+	}),
+	'/(staff)/follow-ups/[followUpId]/summary': page('values.view'),
 	'/(staff)/follow-ups/[followUpId]/thread': page('thread.view'),
 
 	'/(admin)/people': page('people.manage', {
@@ -90,8 +100,9 @@ export const ROUTE_ACCESS: Readonly<Record<string, RouteAccess>> = {
 	'/(admin)/operations': page('operations.view'),
 	'/(admin)/access-record': page(['access-record.view-all', 'access-record.view-own']),
 
-	'/(public)/v/[token]': page('public'),
-	'/(public)/v/[token]/check-in': page('public'),
+	'/(public)/v/[token]': page('public', { confirm: 'public', otherTime: 'public' }),
+	'/(public)/v/[token]/check-in': page('public', { default: 'public' }),
+	'/(public)/v/[token]/check-in/[checkInId]': page('public'),
 	'/(public)/v/[token]/visit.ics': endpoint({ GET: 'public' }),
 	'/feeds/[token]': endpoint({ GET: 'public' }),
 

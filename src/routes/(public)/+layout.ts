@@ -1,0 +1,2 @@
+/** Parents' pages are plain HTML: nothing to download, nothing to break on an old telephone. */
+export const csr = false;
