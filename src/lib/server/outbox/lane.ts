@@ -1,0 +1,175 @@
+import type { Channel } from '../../domain/messaging/kinds';
+import { makeCall } from './call';
+import { Lease } from './lease';
+import { pause } from './pause';
+import type { Held, Outbox } from './port';
+import { Recorder } from './recorder';
+import { renewLease } from './renew';
+import { giveBack, takeDue } from './take';
+
+interface InHand {
+	readonly held: Held;
+	readonly lease: Lease;
+}
+
+const AFTER_TROUBLE_MILLISECONDS = 1000;
+
+/**
+ * One worker's way of sending over one channel: takes due messages in batches, keeps a fixed number of calls going, and
+ * records outcomes together.
+ */
+export class Lane {
+	readonly #outbox: Outbox;
+	readonly #channel: Channel;
+	readonly #recorder: Recorder;
+	readonly #leases = new Map<string, Lease>();
+	readonly #calling = new Set<Held>();
+	#ready: InHand[] = [];
+	#isStopped = false;
+	#claims = 0;
+	#wake: (() => void) | null = null;
+
+	constructor(outbox: Outbox, channel: Channel) {
+		this.#outbox = outbox;
+		this.#channel = channel;
+		this.#recorder = new Recorder(outbox, channel, () => this.poke());
+	}
+
+	/** Takes no more messages; what was not begun is given back, calls under way end and are recorded. */
+	stop(): void {
+		this.#isStopped = true;
+		this.poke();
+	}
+
+	/** Something may have become due, or come free. */
+	poke(): void {
+		this.#wake?.();
+		this.#wake = null;
+	}
+
+	/** Sends what is due until nothing is, and returns the number of messages looked at. For tests and one-off runs. */
+	async drain(): Promise<number> {
+		return this.#whileRenewing(async () => {
+			let looked = 0;
+			for (let count = 1; count > 0; looked += count) {
+				count = await this.#take();
+				await this.#untilIdle();
+			}
+			return looked;
+		});
+	}
+
+	/** Sends what is due, now and at every `poke`, until `stop`; then ends with every outcome recorded. */
+	async serve(): Promise<void> {
+		await this.#whileRenewing(async () => {
+			while (!this.#isStopped) {
+				const hasRoom = this.#ready.length < this.#outbox.settings.concurrency;
+				const count = hasRoom ? await this.#takeOrPause() : 0;
+				if (this.#recorder.pausedUntil !== null) await this.#giveBackReady();
+				if (count === 0 && !this.#isStopped) await this.#poked();
+			}
+			await this.#giveBackReady();
+			await this.#untilIdle();
+		});
+	}
+
+	async #untilIdle(): Promise<void> {
+		while (this.#ready.length > 0 || this.#calling.size > 0 || this.#recorder.isBusy) {
+			if (this.#recorder.pausedUntil !== null && this.#ready.length > 0) await this.#giveBackReady();
+			else await this.#poked();
+		}
+	}
+
+	#poked(): Promise<void> {
+		return new Promise((resolve) => (this.#wake = resolve));
+	}
+
+	/** The database may be away: the loop outlives it. */
+	async #takeOrPause(): Promise<number> {
+		try {
+			return await this.#take();
+		} catch (error) {
+			this.#outbox.ctx.log.error({ err: error, channel: this.#channel }, 'no messages could be taken');
+			await pause(AFTER_TROUBLE_MILLISECONDS);
+			return 0;
+		}
+	}
+
+	async #take(): Promise<number> {
+		const { settings, workerId, ctx } = this.#outbox;
+		const { pausedUntil } = this.#recorder;
+		if (pausedUntil !== null && pausedUntil > ctx.clock.now()) return 0;
+		this.#recorder.pausedUntil = null;
+		const lease = new Lease(`${workerId}/${this.#channel}${++this.#claims}`, settings.leaseSeconds);
+		const { looked, held } = await takeDue(this.#outbox, this.#channel, settings.batch, lease.token);
+		if (held.length > 0) this.#leases.set(lease.token, lease);
+		this.#ready.push(...held.map((one) => ({ held: one, lease })));
+		this.#call();
+		return looked;
+	}
+
+	#call(): void {
+		const { concurrency, callSeconds } = this.#outbox.settings;
+		while (this.#calling.size < concurrency) {
+			const next = this.#ready.shift();
+			if (next === undefined) return;
+			// A call must end within its lease: past it, somebody else may be asking the provider about it already.
+			if (next.lease.secondsLeft() > callSeconds + 2) this.#begin(next.held);
+			else this.#outbox.ctx.log.warn({ messageId: next.held.row.id }, 'not called: the lease ran out');
+		}
+	}
+
+	#begin(held: Held): void {
+		this.#calling.add(held);
+		void makeCall(this.#outbox, held).then((called) => {
+			this.#recorder.add(called);
+			this.#calling.delete(held);
+			this.#call();
+			if (this.#ready.length < this.#outbox.settings.concurrency) this.poke();
+		});
+	}
+
+	async #giveBackReady(): Promise<void> {
+		const waiting = this.#ready.map(({ held }) => held);
+		this.#ready = [];
+		for (const token of new Set(waiting.map((held) => held.token))) {
+			try {
+				await giveBack(
+					this.#outbox,
+					waiting.filter((held) => held.token === token)
+				);
+			} catch (error) {
+				// They are found when their lease ends.
+				this.#outbox.ctx.log.error({ err: error }, 'messages could not be given back');
+			}
+		}
+	}
+
+	async #whileRenewing<T>(work: () => Promise<T>): Promise<T> {
+		const timer = setInterval(() => void this.#renewAll(), (this.#outbox.settings.leaseSeconds * 1000) / 3);
+		try {
+			return await work();
+		} finally {
+			clearInterval(timer);
+		}
+	}
+
+	async #renewAll(): Promise<void> {
+		const unrecorded = this.#recorder.unrecorded.map(({ held }) => held);
+		const all = [...this.#ready.map(({ held }) => held), ...this.#calling, ...unrecorded];
+		for (const [token, lease] of this.#leases) {
+			const ids = all.filter((held) => held.token === token).map(({ row }) => row.id);
+			if (ids.length === 0) this.#leases.delete(token);
+			else await this.#renew(lease, ids);
+		}
+	}
+
+	async #renew(lease: Lease, ids: readonly string[]): Promise<void> {
+		try {
+			const lost = await renewLease(this.#outbox.ctx.db, lease, ids);
+			this.#ready = this.#ready.filter(({ held }) => !lost.has(held.row.id));
+		} catch (error) {
+			this.#outbox.ctx.log.warn({ err: error }, 'a lease could not be renewed');
+		}
+	}
+}

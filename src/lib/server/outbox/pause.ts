@@ -1,0 +1,2 @@
+export const pause = (milliseconds: number): Promise<void> =>
+	new Promise((resolve) => setTimeout(resolve, milliseconds));

@@ -1,0 +1,69 @@
+import { eq } from 'drizzle-orm';
+import {
+	afterCalls,
+	grantCalls,
+	isUnbroken,
+	type SenderNews,
+	type SenderState
+} from '../../domain/messaging/breaker';
+import type { Channel } from '../../domain/messaging/kinds';
+import type { Reader, Tx } from '../db/client';
+import { senders } from '../db/schema/messaging';
+import { withTx } from '../db/tx';
+import type { Outbox } from './port';
+
+const FRESH: SenderState = { pausedUntil: null, failuresInARow: 0, rateFreeAt: null };
+
+/**
+ * How many of `wanted` calls this worker may make now, by the sender's rate and breaker, which all workers share. The row is
+ * locked only when there is something to count, and never while messages are.
+ */
+export async function reserveCalls(outbox: Outbox, channel: Channel, wanted: number): Promise<number> {
+	const { ctx, settings } = outbox;
+	const perSecond = settings.perSecond[channel];
+	const now = ctx.clock.now();
+	const seen = await findSender(ctx.db, channel);
+	if (perSecond === null && isUnbroken(seen)) return wanted;
+	if (seen.pausedUntil !== null && seen.pausedUntil > now) return 0;
+	const probeSeconds = settings.callSeconds + settings.breakerSeconds;
+	return withTx(ctx.db, async (tx) => {
+		const sender = await lockSender(tx, channel);
+		const { granted, next } = grantCalls(sender, wanted, now, { perSecond, probeSeconds });
+		await saveSender(tx, channel, next);
+		return granted;
+	});
+}
+
+/** Tells all workers how a batch of calls went. Returns until when nobody should call; null when calls may go on. */
+export async function reportCalls(outbox: Outbox, channel: Channel, news: SenderNews): Promise<Date | null> {
+	const { ctx, settings } = outbox;
+	if (news.failures === 0 && !news.pauseSeconds && isUnbroken(await findSender(ctx.db, channel))) return null;
+	const now = ctx.clock.now();
+	const fraction = ctx.random.fraction();
+	const next = await withTx(ctx.db, async (tx) => {
+		const sender = await lockSender(tx, channel);
+		const after = afterCalls(sender, news, { now, fraction, openSeconds: settings.breakerSeconds });
+		await saveSender(tx, channel, after);
+		return after;
+	});
+	return next.pausedUntil !== null && next.pausedUntil > now ? next.pausedUntil : null;
+}
+
+async function findSender(db: Reader, channel: Channel): Promise<SenderState> {
+	const [row] = await db.select().from(senders).where(eq(senders.id, channel));
+	return row ?? FRESH;
+}
+
+async function lockSender(tx: Tx, channel: Channel): Promise<SenderState> {
+	const [row] = await tx.select().from(senders).where(eq(senders.id, channel)).for('update');
+	return row ?? FRESH;
+}
+
+async function saveSender(tx: Tx, channel: Channel, state: SenderState): Promise<void> {
+	const { pausedUntil, failuresInARow, rateFreeAt } = state;
+	const values = { pausedUntil, failuresInARow, rateFreeAt };
+	await tx
+		.insert(senders)
+		.values({ id: channel, ...values })
+		.onDuplicateKeyUpdate({ set: values });
+}
