@@ -1,0 +1,117 @@
+import type { MessageKind } from '../../domain/messaging/kinds';
+import { dedupeKeyOf, PRIORITY } from '../../domain/messaging/plan-facts';
+import type { Ctx } from '../context';
+import type { Tx } from '../db/client';
+import { withTx } from '../db/tx';
+import { insertMessages } from '../repos/messages';
+import type { PhoneFollowUp, ThreadEntryRow } from '../repos/thread';
+import { raiseAlert } from './alerts';
+
+const MINUTE = 60_000;
+const HOUR = 60 * MINUTE;
+/** Words that do not alarm are read within this time (common practice, no source). */
+const READ_WITHIN_HOURS = 2;
+
+type AnswerKind = Extract<
+	MessageKind,
+	'help-answer' | 'stop-answer' | 'start-answer' | 'emergency-advice' | 'which-newborn'
+>;
+
+interface Answer {
+	readonly kind: AnswerKind;
+	readonly entry: ThreadEntryRow;
+	/** Follow-ups of the number; the answer goes out once, to the first one's carer. */
+	readonly known: readonly PhoneFollowUp[];
+	readonly facts?: Record<string, string>;
+}
+
+/** Plans one answer to a text, once for each text: the entry is its occasion. */
+export async function answerBy(ctx: Ctx, answer: Answer): Promise<void> {
+	await withTx(ctx.db, (tx) => planAnswer(tx, ctx, answer));
+}
+
+async function planAnswer(tx: Tx, ctx: Ctx, { kind, entry, known, facts = {} }: Answer): Promise<void> {
+	const [about] = known;
+	if (about === undefined) return;
+	const now = ctx.clock.now();
+	const { followUpId, clinicId, carer } = about;
+	const message = { kind, occasion: entry.id, carerId: carer.id, channel: 'sms' as const };
+	await insertMessages(tx, [
+		{
+			...message,
+			id: ctx.random.id(),
+			dedupeKey: dedupeKeyOf(followUpId, message),
+			followUpId,
+			siteId: clinicId,
+			language: carer.language,
+			facts,
+			state: 'planned',
+			priority: kind === 'emergency-advice' ? PRIORITY.urgent : PRIORITY.answer,
+			runAt: now,
+			expiresAt: new Date(now.getTime() + 2 * HOUR),
+			createdAt: now,
+			updatedAt: now
+		}
+	]);
+}
+
+/** Emergency advice at once, whatever the hour. */
+export async function adviseEmergency(
+	ctx: Ctx,
+	{ entry, known }: Pick<Answer, 'entry' | 'known'>
+): Promise<void> {
+	await answerBy(ctx, { kind: 'emergency-advice', entry, known });
+}
+
+/** Asks which newborn is meant; the order of the numbers is kept with the question. */
+export async function askWhich(ctx: Ctx, { entry, known }: Pick<Answer, 'entry' | 'known'>): Promise<void> {
+	const choices = known.map(({ followUpId }) => followUpId).join(' ');
+	await answerBy(ctx, { kind: 'which-newborn', entry, known, facts: { choices } });
+}
+
+interface Words {
+	readonly entry: ThreadEntryRow;
+	readonly about: PhoneFollowUp;
+	readonly isAlarming: boolean;
+	/** The number belongs to several newborns and the words do not say which. */
+	readonly isUncertain: boolean;
+}
+
+/** Words that a person has to read: at once where they alarm, by desk and pediatrician. */
+export async function alertWords(ctx: Ctx, { entry, about, isAlarming, isUncertain }: Words): Promise<void> {
+	const now = ctx.clock.now();
+	const which = isUncertain ? 'About one of several newborns of this family. ' : '';
+	const roles = isAlarming ? (['desk', 'pediatrician'] as const) : (['desk'] as const);
+	await withTx(ctx.db, async (tx) => {
+		for (const role of roles) {
+			await raiseAlert(tx, ctx, {
+				followUpId: about.followUpId,
+				kind: isAlarming ? 'alarming-words' : 'words-from-family',
+				role,
+				siteId: about.clinicId,
+				dueAt: isAlarming ? now : new Date(now.getTime() + READ_WITHIN_HOURS * HOUR),
+				detail: `${which}The family wrote: ${entry.body}`.slice(0, 500),
+				dedupeKey: `words ${entry.id} ${about.followUpId} ${role}`
+			});
+		}
+	});
+}
+
+/** A stopped channel is a family that reminders no longer reach: the desk finds another way. */
+export async function alertContactStopped(
+	tx: Tx,
+	ctx: Ctx,
+	{ entry, about }: Pick<Words, 'entry' | 'about'>
+): Promise<void> {
+	const now = ctx.clock.now().getTime();
+	const halfWay = about.visitAt === null ? Infinity : Math.max(now, (now + about.visitAt.getTime()) / 2);
+	await raiseAlert(tx, ctx, {
+		followUpId: about.followUpId,
+		kind: 'contact-stopped',
+		role: 'desk',
+		siteId: about.clinicId,
+		dueAt: new Date(Math.min(now + 4 * HOUR, halfWay)),
+		detail: 'Text messages were stopped by the family. Agree on another way to reach them.',
+		dedupeKey: `stopped ${entry.id} ${about.followUpId}`
+	});
+}
