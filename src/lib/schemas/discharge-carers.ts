@@ -20,6 +20,14 @@ function readPhone(typed: string, field: string, list: IssueList): string | null
 	);
 }
 
+/** A stored number as people of the home country type it. */
+export function phoneAsTyped(e164: string): string {
+	const number = parsePhoneNumberFromString(e164, HOME_COUNTRY);
+	return number?.countryCallingCode === '1'
+		? number.formatNational()
+		: (number?.formatInternational() ?? e164);
+}
+
 function readMail(typed: string, field: string, list: IssueList): string | null {
 	if (typed === '' || MAIL.test(typed)) return typed || null;
 	return list.add(field, 'This is not an e-mail address. Write it like name@example.org.');

@@ -1,7 +1,6 @@
 import type { CarerFacts, DischargeFacts } from '../domain/followup/discharge';
-import { formatPhone } from '../format/phone';
-import { toFieldValues } from '../format/time';
-import type { CarerKey } from './discharge-carers';
+import { toFieldValues } from '../domain/local-time';
+import { phoneAsTyped, type CarerKey } from './discharge-carers';
 import { dischargeFields, type DischargeForm } from './discharge-fields';
 
 /** How many rows a new form offers; without scripts they are all there is until the first save. */
@@ -50,7 +49,7 @@ function carerFields<Key extends CarerKey>(key: Key, carer: CarerFacts | undefin
 	return {
 		[`${key}Name`]: carer.name,
 		[`${key}Relation`]: carer.relation,
-		[`${key}Phone`]: carer.phone ? formatPhone(carer.phone) : '',
+		[`${key}Phone`]: carer.phone ? phoneAsTyped(carer.phone) : '',
 		[`${key}Email`]: carer.email ?? '',
 		[`${key}Language`]: carer.language,
 		[`${key}Sms`]: carer.consentsToSms,

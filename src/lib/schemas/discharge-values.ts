@@ -1,4 +1,4 @@
-import { fromFieldValues } from '../format/time';
+import { fromFieldValues } from '../domain/local-time';
 
 /** A sentence about one field; rows add their number: `['measurementTotal', 1]`. */
 export interface FormIssue {
