@@ -1,4 +1,4 @@
-import { assess } from '../../domain/guideline';
+import { assessAtAnyAge } from '../../domain/guideline';
 import type { Assessment, AssessmentInput, Refusal, StandardId } from '../../domain/guideline/types';
 import type { Result } from '../../domain/result';
 import type { NewbornRecord } from '../repos/newborns';
@@ -33,10 +33,10 @@ export function assessmentInputOf(
 	};
 }
 
-/** Holds a newborn's record against the standard, as of `now`. */
+/** Holds a newborn's record against the standard, as of `now`, at any age. */
 export function assessRecord(
 	record: NewbornRecord,
 	asked: { readonly standard: StandardId; readonly dischargeAt: Date; readonly now: Date }
-): Result<Assessment, Refusal[]> {
-	return assess(assessmentInputOf(record, asked));
+): Result<Assessment, readonly Refusal[]> {
+	return assessAtAnyAge(assessmentInputOf(record, asked));
 }
