@@ -1,5 +1,6 @@
 import { existsSync, readdirSync, readFileSync, readlinkSync } from 'node:fs';
 import { connect, createServer } from 'node:net';
+import { Explained } from './explained.mjs';
 
 export const LOOPBACK = '127.0.0.1';
 
@@ -21,7 +22,7 @@ export const DEFAULT_PORTS = Object.freeze({
  * The ports to use: the defaults, moved by the environment.
  * @param {Record<string, string | undefined>} env
  * @returns {Record<PortName, number>}
- * @throws Error with a sentence for the person when a variable is no port, or two services were given the same one.
+ * @throws Explained for the person when a variable is no port, or two services were given the same one.
  */
 export function choosePorts(env) {
 	const chosen = {
@@ -35,7 +36,7 @@ export function choosePorts(env) {
 		const twin = names.find((other) => other !== name && chosen[other] === chosen[name]);
 		if (twin) {
 			const { variable } = DEFAULT_PORTS[name];
-			throw new Error(
+			throw new Explained(
 				`${variable} and ${DEFAULT_PORTS[twin].variable} are both ${chosen[name]}. Give each its own port.`
 			);
 		}
@@ -50,7 +51,7 @@ function readPort(env, name) {
 	if (text === undefined || text === '') return port;
 	const value = Number(text);
 	if (!Number.isInteger(value) || value < 1 || value > 65535) {
-		throw new Error(`${variable} is "${text}", which is not a port. Give a number from 1 to 65535.`);
+		throw new Explained(`${variable} is "${text}", which is not a port. Give a number from 1 to 65535.`);
 	}
 	return value;
 }

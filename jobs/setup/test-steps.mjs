@@ -1,6 +1,7 @@
 import { join } from 'node:path';
 import { compileTexts } from './build.mjs';
 import { countPlaywright, countStep, countVitest } from './counts.mjs';
+import { Explained } from './explained.mjs';
 
 /**
  * @typedef {object} Step One part of `npm test`.
@@ -125,14 +126,14 @@ export function testSteps(folder) {
  * The steps that were asked for.
  * @param {Step[]} steps @param {string | null} only Names with commas between; null for all.
  * @returns {Step[]}
- * @throws Error naming what there is to choose from, when a name is unknown
+ * @throws Explained naming what there is to choose from, when a name is unknown
  */
 export function chooseSteps(steps, only) {
 	if (only === null) return steps;
 	const wanted = only.split(',').map((name) => name.trim());
 	const unknown = wanted.filter((name) => !steps.some((step) => step.id === name));
 	if (unknown.length > 0) {
-		throw new Error(
+		throw new Explained(
 			`There is no step "${unknown.join('", "')}". Choose from: ${steps.map((step) => step.id).join(', ')}.`
 		);
 	}
