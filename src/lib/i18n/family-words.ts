@@ -1,14 +1,24 @@
-import type { Language } from '../domain/messaging/language';
+import { textDirection, type Language } from '../domain/messaging/language';
 import { m } from '../paraglide/messages';
 
 type Catalogue = typeof m;
 export type FamilyKey = keyof Catalogue;
 
+const FIRST_STRONG_ISOLATE = '\u2068';
+const END_OF_ISOLATE = '\u2069';
+
+/** Keeps a telephone number or a name whole inside a sentence that runs the other way. */
+function isolated(inputs: Record<string, string>): Record<string, string> {
+	const whole = (value: string) => `${FIRST_STRONG_ISOLATE}${value}${END_OF_ISOLATE}`;
+	return Object.fromEntries(Object.entries(inputs).map(([name, value]) => [name, whole(value)]));
+}
+
 /** The catalogue in one family's language; a page of theirs never asks the process for its locale. */
 export function familyWords(language: Language) {
 	return (key: FamilyKey, inputs: Record<string, string> = {}): string => {
 		const message: (inputs: never, options: { locale: Language }) => string = m[key];
-		return message(inputs as never, { locale: language });
+		const filled = textDirection(language) === 'rtl' ? isolated(inputs) : inputs;
+		return message(filled as never, { locale: language });
 	};
 }
 
