@@ -47,6 +47,7 @@ export function localVariables({ ports, secrets, dataDir }) {
 		FAKES_SMTP_PORT: String(ports.smtp),
 		SMTP_HOST: LOOPBACK,
 		SMTP_PORT: String(ports.smtp),
+		MAIL_SENT_LIST_URL: `http://${LOOPBACK}:${ports.fakes}/mail/sent`,
 		MAIL_FROM: 'Fadewell <follow-up@example.org>',
 		LOG_LEVEL: 'info',
 		DEMO: '1',
@@ -72,6 +73,7 @@ export function mergeVariables(local, own) {
 	const ownSms = 'TWILIO_ACCOUNT_SID' in own && !('TWILIO_BASE_URL' in own);
 	const ownMail = 'SMTP_HOST' in own && own.SMTP_HOST !== LOOPBACK;
 	if (ownSms) delete variables.TWILIO_BASE_URL;
+	if (ownMail && !('MAIL_SENT_LIST_URL' in own)) delete variables.MAIL_SENT_LIST_URL;
 	if (ownSms || ownMail) {
 		variables.DEMO = '0';
 		remarks.push('.env names a real provider, so the demo is off: no invented message leaves this machine.');

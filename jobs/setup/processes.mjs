@@ -40,7 +40,7 @@ export async function startService({ name, command, args, env, cwd, logFile, sha
 		pid,
 		ended,
 		isRunning: () => running,
-		stop: async (graceMs = 15_000) => {
+		stop: async (graceMs = 30_000) => {
 			if (!running) return;
 			signalQuietly(pid, 'SIGTERM');
 			const inTime = await Promise.race([ended.then(() => true), pause(graceMs, false, { ref: false })]);
