@@ -60,8 +60,24 @@ export const ROUTE_ACCESS: Readonly<Record<string, RouteAccess>> = {
 	'/(staff)/discharges/[followUpId]/sheet': page('discharge.view'),
 
 	'/(staff)/queue': page('queue.view'),
-	'/(staff)/calendar': page('calendar.view'),
-	'/(staff)/morning': page('queue.view'),
+	'/(staff)/queue/[followUpId]': page('queue.view', {
+		log: 'attempt.log',
+		book: 'visit.manage',
+		move: 'visit.manage',
+		cancel: 'visit.manage',
+		confirm: 'visit.manage',
+		arrive: 'visit.manage',
+		miss: 'visit.manage',
+		settle: 'alert.settle',
+		askOutside: 'visit.manage',
+		approve: 'visit.approve-outside-window'
+	}),
+	'/(staff)/calendar': page('calendar.view', { choose: 'visit.manage' }),
+	'/(staff)/morning': page('queue.view', {
+		confirm: 'visit.manage',
+		arrive: 'visit.manage',
+		miss: 'visit.manage'
+	}),
 	'/(staff)/waiting': page('waiting.view'),
 
 	'/(staff)/follow-ups/[followUpId]': page('follow-up.view', {
@@ -110,6 +126,7 @@ export const ROUTE_ACCESS: Readonly<Record<string, RouteAccess>> = {
 	'/webhooks/sms/status': endpoint({ POST: 'public' }),
 
 	'/api/v1/assessments': endpoint({ POST: 'discharge.view' }),
+	'/api/v1/queue': endpoint({ GET: 'queue.view' }),
 	'/api/v1/places': endpoint({ GET: ['visit.book-first', 'visit.manage'] }),
 	'/api/v1/search': endpoint({ GET: 'follow-up.view' }),
 
