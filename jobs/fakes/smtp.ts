@@ -3,7 +3,7 @@ import { simpleParser, type ParsedMail } from 'mailparser';
 import { SMTPServer, type SMTPServerDataStream, type SMTPServerSession } from 'smtp-server';
 import { after } from './http';
 import type { FakesSettings } from './settings';
-import type { FakeMail, Store } from './store';
+import type { FakeAttachment, FakeMail, Store } from './store';
 import type { MailTrouble, Met, Troubles } from './troubles';
 
 interface Refusal {
@@ -76,14 +76,25 @@ function mailOf(parsed: ParsedMail, to: string): FakeMail {
 		subject: parsed.subject ?? '',
 		text: parsed.text ?? '',
 		html: typeof parsed.html === 'string' ? parsed.html : null,
-		attachments: parsed.attachments.map(({ filename, contentType, content, headers }) => ({
-			filename: filename ?? 'calendar.ics',
-			contentType,
-			method: methodOf(headers.get('content-type')),
-			base64: content.toString('base64')
-		})),
+		attachments: attachmentsOf(parsed),
 		at: Date.now()
 	};
+}
+
+/** A calendar object comes twice, as another form of the mail and as a file; a reader shows it once. */
+function attachmentsOf(parsed: ParsedMail): FakeAttachment[] {
+	const all = parsed.attachments.map(({ filename, contentType, content, headers }) => ({
+		filename: filename ?? 'calendar.ics',
+		contentType,
+		method: methodOf(headers.get('content-type')),
+		base64: content.toString('base64')
+	}));
+	const last = new Map(all.map((one) => [one.base64, one]));
+	return [...last.values()].map((one) => ({
+		...one,
+		method:
+			one.method ?? all.find((twin) => twin.base64 === one.base64 && twin.method !== null)?.method ?? null
+	}));
 }
 
 function methodOf(header: unknown): string | null {

@@ -1,9 +1,8 @@
 import { segmentsOf } from '../sms-resource';
 import type { FakeSms } from '../store';
 import { escape, instant, linked } from './html';
+import { quickAnswers } from './quick-answers';
 
-/** Words that a parent may tap instead of typing; the product understands them in every language. */
-const QUICK_ANSWERS = ['YES', 'OTHER', 'HELP', 'STOP', 'START'] as const;
 const SHOWN = 40;
 
 const STATUS_WORDS: Readonly<Record<string, string>> = {
@@ -26,12 +25,15 @@ export function telephoneCard(number: string, thread: readonly FakeSms[]): strin
 <ol class="thread" tabindex="0" aria-label="Messages" data-key="thread-${escape(number)}">${earlier}${shown.map(bubble).join('')}</ol>
 <form method="post" action="/answer" class="answer">
 <input type="hidden" name="from" value="${escape(number)}">
-<div class="quick">${QUICK_ANSWERS.map((word) => `<button type="submit" name="word" value="${word}">${word}</button>`).join('')}</div>
+<div class="quick" dir="auto">${quickAnswers(thread).map(quickButton).join('')}</div>
 <div class="write"><label for="${id}">Answer as this parent</label>
 <input id="${id}" name="body" autocomplete="off" dir="auto" maxlength="1600" data-key="write-${escape(number)}">
 <button type="submit" name="word" value="">Send</button></div>
 </form></article>`;
 }
+
+const quickButton = (word: string): string =>
+	`<button type="submit" name="word" value="${escape(word)}">${escape(word)}</button>`;
 
 function bubble(sms: FakeSms): string {
 	const isParent = sms.direction === 'inbound';

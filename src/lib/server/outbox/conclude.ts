@@ -3,10 +3,10 @@ import { afterFailure } from '../../domain/messaging/retry';
 import type { Tx } from '../db/client';
 import { messages } from '../db/schema/messaging';
 import type { MessageRow, Outbox } from './port';
+import { tellUndelivered } from './tell-desk';
 
 /** Every way in which one message leaves a worker's hands, other than being sent. The caller holds the row or its lease. */
 
-const URGENT = 1;
 const MINUTE = 60_000;
 
 type Change = Partial<typeof messages.$inferInsert>;
@@ -34,7 +34,7 @@ const planned = (row: MessageRow): Known => ({ row, holds: eq(messages.state, 'p
 /** Too late to be of use. Where it was tried in vain, somebody has to know. */
 async function expired(tx: Tx, outbox: Outbox, row: MessageRow): Promise<void> {
 	await change(tx, outbox, planned(row), { ...free, state: 'expired' });
-	if (row.attempts > 0) await tellDesk(tx, outbox, row, 'could not be sent in time');
+	if (row.attempts > 0) await tellUndelivered(outbox, tx, row, 'could not be sent in time');
 }
 
 async function withdrawn(tx: Tx, outbox: Outbox, row: MessageRow, reason: string): Promise<void> {
@@ -80,7 +80,7 @@ async function failed(tx: Tx, outbox: Outbox, known: Known, failure: Failure): P
 		await change(tx, outbox, known, { ...free, state: 'planned', runAt: after.runAt, attempts, lastError });
 	} else if (after.why === 'too-late') {
 		const isOurs = await change(tx, outbox, known, { ...free, state: 'expired', attempts, lastError });
-		if (isOurs) await tellDesk(tx, outbox, row, 'could not be sent in time');
+		if (isOurs) await tellUndelivered(outbox, tx, row, 'could not be sent in time');
 	} else {
 		await dead(tx, outbox, known, { reason: failure.reason, attempts });
 	}
@@ -96,24 +96,7 @@ async function dead(
 	const unprovenSince = known.row.followUpId === null ? null : outbox.ctx.clock.now();
 	const values = { ...free, state: 'dead', attempts, lastError: cut(reason), unprovenSince } as const;
 	const isOurs = await change(tx, outbox, known, values);
-	if (isOurs) await tellDesk(tx, outbox, known.row, `could not be sent (${reason})`);
-}
-
-/** Mail to our own people has no follow-up and no desk: the watch shows it instead. */
-export async function tellDesk(tx: Tx, outbox: Outbox, row: MessageRow, what: string): Promise<void> {
-	const { ctx } = outbox;
-	ctx.log.warn({ messageId: row.id, kind: row.kind, channel: row.channel, what }, 'a message did not arrive');
-	if (row.followUpId === null) return;
-	const minutes = row.priority <= URGENT ? 10 : 60;
-	await outbox.raiseAlert(tx, ctx, {
-		followUpId: row.followUpId,
-		kind: 'message-undeliverable',
-		role: 'desk',
-		siteId: row.siteId,
-		dueAt: new Date(ctx.clock.now().getTime() + minutes * MINUTE),
-		detail: `${row.channel === 'sms' ? 'Text message' : 'Mail'} "${row.kind}" ${what}.`,
-		dedupeKey: `undeliverable:${row.id}`
-	});
+	if (isOurs) await tellUndelivered(outbox, tx, known.row, `could not be sent (${reason})`);
 }
 
 const cut = (reason: string): string => reason.slice(0, 300);
