@@ -1,6 +1,21 @@
 import pino from 'pino';
 
-const REDACTED = ['name', 'phone', 'email', 'token', 'password', 'body', 'to', '*.name', '*.phone', '*.email', '*.token', '*.password', '*.body', '*.to'];
+const REDACTED = [
+	'name',
+	'phone',
+	'email',
+	'token',
+	'password',
+	'body',
+	'to',
+	'*.name',
+	'*.phone',
+	'*.email',
+	'*.token',
+	'*.password',
+	'*.body',
+	'*.to'
+];
 
 /** JSON lines without names, telephone numbers, addresses or words of a family. */
 export function createLog(level: string, bindings: Record<string, string> = {}) {

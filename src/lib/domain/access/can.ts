@@ -123,7 +123,9 @@ export function can(actor: StaffActor, action: Action, resource: Resource): bool
 
 /** The sites at which the actor may do the action: the scope of a list. */
 export function sitesWhere(actor: StaffActor, action: Action): string[] {
-	const sites = actor.roles.filter(({ role, siteId }) => siteId !== null && PERMISSIONS[role][action] !== undefined);
+	const sites = actor.roles.filter(
+		({ role, siteId }) => siteId !== null && PERMISSIONS[role][action] !== undefined
+	);
 	return [...new Set(sites.flatMap(({ siteId }) => (siteId === null ? [] : [siteId])))];
 }
 

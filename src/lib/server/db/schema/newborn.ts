@@ -1,5 +1,16 @@
 import { sql } from 'drizzle-orm';
-import { boolean, check, date, decimal, index, int, json, mysqlTable, uniqueIndex, varchar } from 'drizzle-orm/mysql-core';
+import {
+	boolean,
+	check,
+	date,
+	decimal,
+	index,
+	int,
+	json,
+	mysqlTable,
+	uniqueIndex,
+	varchar
+} from 'drizzle-orm/mysql-core';
 import type {
 	BilirubinUnit,
 	Feeding,
@@ -108,7 +119,10 @@ export const measurements = mysqlTable(
 	},
 	(t) => [
 		index('measurements_newborn').on(t.newbornId, t.measuredAt),
-		check('measurements_total', sql`${t.total} > 0 and (${t.direct} is null or (${t.direct} >= 0 and ${t.direct} <= ${t.total}))`)
+		check(
+			'measurements_total',
+			sql`${t.total} > 0 and (${t.direct} is null or (${t.direct} >= 0 and ${t.direct} <= ${t.total}))`
+		)
 	]
 );
 

@@ -36,7 +36,10 @@ export const staffRoles = mysqlTable(
 		role: asciiWord({ length: 20 }).$type<Role>().notNull(),
 		siteId: recordId().references(() => sites.id)
 	},
-	(t) => [uniqueIndex('staff_roles_once').on(t.staffId, t.role, t.siteId), index('staff_roles_site').on(t.siteId, t.role)]
+	(t) => [
+		uniqueIndex('staff_roles_once').on(t.staffId, t.role, t.siteId),
+		index('staff_roles_site').on(t.siteId, t.role)
+	]
 );
 
 /** Lucia's sessions; the id held here is the SHA-256 of the one in the cookie. */
