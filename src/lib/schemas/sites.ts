@@ -58,6 +58,16 @@ export const openingSchema = z
 		error: 'Not even one visit of this length fits between the two times.'
 	});
 
+/** What an empty form offers. */
+export const NEW_OPENING: z.output<typeof openingSchema> = {
+	weekday: 1,
+	from: '',
+	until: '',
+	visitKind: 'check',
+	placeMinutes: 30,
+	placesAtOnce: 1
+};
+
 export const closedDaySchema = z.object({
 	closedOn: z.iso.date('Choose a day.'),
 	reason: words(160, 'Say why, in a word or two.')

@@ -20,7 +20,7 @@ import {
 	listClosedDays,
 	listComingVisits,
 	listOpenings,
-	listSites,
+	listSites as listSitesOf,
 	lockSite,
 	retireOpening,
 	updateSite,
@@ -42,9 +42,13 @@ export const siteResource = ({
 }: Pick<Site, 'organisationId' | 'kind' | 'id'>): Resource =>
 	kind === 'clinic' ? { organisationId, clinicId: id } : { organisationId, birthSiteId: id };
 
+/** Every site of the actor's organisation, birth units first. */
+export const listSites = (ctx: Ctx, actor: StaffActor): Promise<Site[]> =>
+	listSitesOf(ctx.db, actor.organisationId);
+
 /** The sites whose openings the actor may edit: all for an administrator, the own clinic for its desk. */
 export async function listEditableSites(ctx: Ctx, actor: StaffActor): Promise<Site[]> {
-	const sites = await listSites(ctx.db, actor.organisationId);
+	const sites = await listSites(ctx, actor);
 	return sites.filter((site) => can(actor, 'openings.edit', siteResource(site)));
 }
 
