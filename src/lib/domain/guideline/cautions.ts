@@ -26,6 +26,12 @@ const SHARED = {
 		text: 'Bilirubin rises faster than the published limit, which suggests hemolysis. Do a direct antiglobulin test if none was done, and look for the cause.',
 		source: 'AAP 2022 key action statements; NICE CG98 (from memory)'
 	},
+	'rapid-rise-two-methods': {
+		code: 'rapid-rise-two-methods',
+		severity: 'warning',
+		text: 'Bilirubin seems to rise faster than the published limit, but the two values were taken by different methods, which differ by themselves. Repeat by one method.',
+		source: 'AAP 2022 key action statements; NICE CG98 (from memory); the reserve is our reading'
+	},
 	'hearing-test': {
 		code: 'hearing-test',
 		severity: 'warning',
@@ -188,14 +194,21 @@ function cautionValues(
 	}
 	if (hasUntrusted) cautions.push(SHARED['untrusted-value']);
 	if (isLow) cautions.push(SHARED['check-unit']);
-	if (hasRapidRise(readings, standard)) cautions.push(SHARED['rapid-rise']);
+	const rapid = readings.length > 1 ? rapidRise(readings, standard) : 'none';
+	if (rapid !== 'none')
+		cautions.push(SHARED[rapid === 'one-method' ? 'rapid-rise' : 'rapid-rise-two-methods']);
 	if (reachedExchange) cautions.push(SHARED['hearing-test']);
 	if (isRaised) cautions.push(SHARED['direct-raised']);
 	if (isOverHalf) cautions.push(SHARED['direct-over-half']);
 }
 
-function hasRapidRise(readings: Decision['readings'], standard: Standard): boolean {
+/** Whether any trusted value rose too fast from the one before it, and whether both were taken by one method. */
+function rapidRise(
+	readings: Decision['readings'],
+	standard: Standard
+): 'none' | 'one-method' | 'two-methods' {
 	let before: Decision['readings'][number] | undefined;
+	let found: 'none' | 'two-methods' = 'none';
 	for (const reading of readings) {
 		if (reading.distrust !== null) continue;
 		if (
@@ -203,11 +216,12 @@ function hasRapidRise(readings: Decision['readings'], standard: Standard): boole
 			before.atMs < reading.atMs &&
 			exceedsLimit(risePerHour(before, reading), reading.ageMs, standard)
 		) {
-			return true;
+			if (before.serum === reading.serum) return 'one-method';
+			found = 'two-methods';
 		}
 		before = reading;
 	}
-	return false;
+	return found;
 }
 
 function cautionOutcome(

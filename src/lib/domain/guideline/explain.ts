@@ -200,6 +200,9 @@ function rateStep(rate: RateOfRise, { decision, standard }: TraceContext): Trace
 	const crossing = rate.projectedCrossingAt
 		? `; a projection only: at this steady rate the line would be met at ${rate.projectedCrossingAt.toISOString()}`
 		: '';
+	const earlier = decision.readings.find((one) => one.index === rate.fromIndex);
+	const methods =
+		earlier?.serum === later?.serum ? '' : '; the two methods differ by themselves, read with care';
 	const compared = rate.exceedsLimit ? 'reaches or passes the limit' : 'within the limit';
 	return step(
 		id,
@@ -209,7 +212,7 @@ function rateStep(rate: RateOfRise, { decision, standard }: TraceContext): Trace
 			to: `bilirubin[${rate.toIndex}]`,
 			limitPerHour: rate.limitPerHour
 		},
-		`${rate.perHour} ${rate.unit} an hour, ${compared}${crossing}`
+		`${rate.perHour} ${rate.unit} an hour, ${compared}${methods}${crossing}`
 	);
 }
 
