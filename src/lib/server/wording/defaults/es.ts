@@ -126,7 +126,7 @@ export const es: DefaultWording = {
 			sms: '{clinic}: le mandamos mensajes de nuevo. Responda STOP para no recibir o HELP para ayuda.'
 		},
 		'which-newborn': {
-			sms: '¿De qué bebé nos habla? Responda con el número: {choices}.'
+			sms: '¿De qué bebé nos habla? Responda solo la cifra: {choices}.'
 		},
 		'emergency-advice': {
 			sms: '¿Su bebé no despierta, no tiene fuerza, se ve azul o respira mal? Llame ya al {emergency}. No nos espere. Nuestro equipo ya lo sabe. Tel.: {nightPhone}.',
