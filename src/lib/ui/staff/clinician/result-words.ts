@@ -5,7 +5,7 @@ import { formatBilirubin, formatBilirubinNumber, unitLabel, windowTestLabel } fr
 /** The result as a sentence that says what to do, for the top of a panel. */
 export const RESULT_SAYS: Readonly<Record<Disposition, string>> = {
 	'follow-up': 'Below the line: see the newborn again inside the window.',
-	judgement: 'Below the line: whether and when to see the newborn again is left to clinical judgement.',
+	judgement: 'Whether and when to see the newborn again is left to clinical judgement.',
 	'measure-first': 'No value that may decide: measure bilirubin first.',
 	'confirm-serum': 'Confirm by serum (TSB) before deciding.',
 	'delay-discharge':

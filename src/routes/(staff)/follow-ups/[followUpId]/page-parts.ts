@@ -82,6 +82,9 @@ export function pageLinks({ may, page, alerts, values }: View): PageLink[] {
 		...(alerts.length > 0 ? [{ id: 'alerts', label: 'Alerts', key: 'a' }] : []),
 		{ id: 'hour-line', label: values ? 'Hour line' : 'Latest value', key: 'h' },
 		...(values ? [{ id: 'result', label: 'Result', key: 'r' }] : []),
+		...(may.decide && page.stage === 'in-treatment'
+			? [{ id: 'end', label: 'End of phototherapy', key: 'e' }]
+			: []),
 		...(may.decide && isHome && values ? [{ id: 'decide', label: 'Decide', key: 'd' }] : []),
 		...(may.recordValues && isHome && values ? [{ id: 'new-value', label: 'New value', key: 'n' }] : []),
 		...(values ? [{ id: 'values', label: 'Values', key: 'v' }] : []),
