@@ -135,6 +135,19 @@ async function bringUpDatabase(lock, { ports, secrets, place }) {
 	markFilled(base);
 }
 
+/** @param {ReturnType<typeof lockOrExplain>} lock @param {import('./stack.mjs').Place} place */
+async function bringUpServices(lock, place) {
+	const sending = async () => {
+		keep(lock, await startFakes(place));
+		// After the fakes: its first message must find them.
+		keep(lock, await startWorker(place));
+	};
+	const serving = async () => keep(lock, await startWeb(place, isDev ? 'dev' : { build: buildFolder }));
+	// Both to the end, also when one fails: what was started must be known to be stopped.
+	const ends = await Promise.allSettled([sending(), serving()]);
+	for (const end of ends) if (end.status === 'rejected') throw end.reason;
+}
+
 /** @param {Record<import('./ports.mjs').PortName, number>} ports @param {import('./stack.mjs').Place} place @param {number} seconds */
 function printWelcome(ports, place, seconds) {
 	const fakesAreUsed = place.variables.TWILIO_BASE_URL?.endsWith(`:${ports.fakes}`);
@@ -184,11 +197,7 @@ async function main() {
 			});
 		}
 		await bringUpDatabase(lock, { ports, secrets, place });
-		await step('Fakes for messages and mail', async () => keep(lock, await startFakes(place)));
-		await step('Worker', async () => keep(lock, await startWorker(place)));
-		await step('Web server', async () =>
-			keep(lock, await startWeb(place, isDev ? 'dev' : { build: buildFolder }))
-		);
+		await step('Fakes, worker and web server', () => bringUpServices(lock, place));
 		printWelcome(ports, place, (performance.now() - began) / 1000);
 		const failure = await untilStopped();
 		if (failure !== null)
