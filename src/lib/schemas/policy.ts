@@ -73,3 +73,7 @@ export function policyOfForm(form: PolicyForm): SitePolicy {
 		dutyStaffIds: [firstDuty, secondDuty].filter((id) => id !== '')
 	};
 }
+
+export const standardSchema = z.object({
+	standard: z.enum(['aap-2022', 'nice-cg98'], 'Choose a guideline.')
+});

@@ -14,6 +14,8 @@ export interface Frame {
 		readonly siteName: string | null;
 	}[];
 	readonly organisationName: string;
+	/** In which times are written: the current site's, else that of the organisation's first site. */
+	readonly timeZone: string;
 	/** The site of the first role; null for an administrator without one. */
 	readonly currentSite: { readonly id: string; readonly name: string; readonly timeZone: string } | null;
 }
@@ -32,6 +34,7 @@ export async function getFrame(ctx: Ctx, actor: StaffActor): Promise<Frame> {
 		email: person?.email ?? '',
 		roles: actor.roles.map((held) => ({ ...held, siteName: siteOf.get(held.siteId ?? '')?.name ?? null })),
 		organisationName: organisation?.name ?? '',
+		timeZone: (current ?? sites[0])?.timeZone ?? 'UTC',
 		currentSite: current ? { id: current.id, name: current.name, timeZone: current.timeZone } : null
 	};
 }

@@ -27,7 +27,7 @@ export const load: PageServerLoad = async ({ locals }) => {
 	return {
 		people,
 		me: actor.staffId,
-		sites: sites.map(({ id, name, kind, timeZone }) => ({ id, name, kind, timeZone })),
+		sites: sites.map(({ id, name, kind }) => ({ id, name, kind })),
 		inviteForm: await superValidate(zod4(inviteSchema), { id: 'invite' })
 	};
 };
