@@ -9,7 +9,14 @@ import { isForged } from '$lib/server/http/forgery';
 import { protectHeaders } from '$lib/server/http/headers';
 import { refuse, sendToSignIn } from '$lib/server/http/refusal';
 import { readTheme, THEME_COOKIE } from '$lib/ui/theme';
-import type { Handle, HandleServerError, RequestEvent, ServerInit } from '@sveltejs/kit';
+import {
+	isHttpError,
+	isRedirect,
+	type Handle,
+	type HandleServerError,
+	type RequestEvent,
+	type ServerInit
+} from '@sveltejs/kit';
 import { sequence } from '@sveltejs/kit/hooks';
 import errorPage from './error.html?raw';
 
@@ -38,11 +45,18 @@ const identify: Handle = ({ event, resolve }) => {
 };
 
 const setHeaders: Handle = async ({ event, resolve }) => {
-	const response = await resolve(event);
+	const response = await resolve(event).catch((error: unknown) => answerFailure(event, error));
 	protectHeaders(response.headers, event.locals.ctx.config.origin.startsWith('https:'));
 	response.headers.set('x-request-id', event.locals.requestId);
 	return response;
 };
+
+/** For what breaks before a page is reached, such as a session that cannot be looked up: fail closed, with a number. */
+function answerFailure(event: RequestEvent, error: unknown): Response {
+	if (isRedirect(error) || isHttpError(error)) throw error;
+	const { message, errorId } = reportFailure(event, error, 500);
+	return refuse(event, 500, `${message} Reference number: ${errorId}`, errorPage);
+}
 
 const refuseForgery: Handle = ({ event, resolve }) => {
 	if (!isForged(event.request, event.url)) return resolve(event);
@@ -102,24 +116,18 @@ const fillShell: Handle = ({ event, resolve }) =>
 
 export const handle = sequence(identify, setHeaders, refuseForgery, findActor, checkAccess, fillShell);
 
-export const handleError: HandleServerError = ({ error, event, status }) => {
-	if (status === 404) return { message: 'There is no such page.' };
+/** Logs the cause without names and telephone numbers; the person gets a plain sentence and the number to ask by. */
+function reportFailure(event: RequestEvent, error: unknown, status: number) {
 	const { log, random } = appContext();
 	const errorId = random.id();
-	log.error(
-		{
-			errorId,
-			requestId: event.locals.requestId,
-			route: event.route.id,
-			method: event.request.method,
-			status,
-			failure: describeFailure(error)
-		},
-		'a request failed'
-	);
-	return {
-		message:
-			'Something broke on our side. What was saved before is still there; this last step was not saved.',
-		errorId
-	};
-};
+	const { requestId } = event.locals;
+	const { method } = event.request;
+	const failure = describeFailure(error);
+	log.error({ errorId, requestId, route: event.route.id, method, status, failure }, 'a request failed');
+	const message =
+		'Something broke on our side. What was saved before is still there; this last step was not saved.';
+	return { message, errorId };
+}
+
+export const handleError: HandleServerError = ({ error, event, status }) =>
+	status === 404 ? { message: 'There is no such page.' } : reportFailure(event, error, status);
