@@ -13,7 +13,7 @@ import { run, startService, tail, waitUntil } from './processes.mjs';
  * @property {boolean} [sharesGroup] See startService.
  */
 
-const READY_MS = 60_000;
+const READY_MS = 120_000;
 
 /**
  * How a TypeScript file under jobs/ is run: in one process, so that signals reach it.
