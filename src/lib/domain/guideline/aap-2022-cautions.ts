@@ -11,6 +11,12 @@ const CAUTIONS = {
 		text: 'Within 2 mg/dL of the line at 24 hours of age or more there are three ways: delay discharge and consider phototherapy; phototherapy at home if every criterion is met; or discharge without phototherapy with close follow-up.',
 		source: 'AAP 2022, figure 7'
 	},
+	'crossing-likely': {
+		code: 'crossing-likely',
+		severity: 'warning',
+		text: 'Of newborns whose last value before discharge was 0 to 1 mg/dL below the line (of 2004), 56 % crossed it afterwards.',
+		source: 'Kuzniewicz et al., Pediatrics 2021;147(5):e2020019778'
+	},
 	'home-not-met': {
 		code: 'home-phototherapy-not-met',
 		severity: 'notice',
@@ -88,6 +94,7 @@ export function cautionAap(decision: Made, cautions: Caution[]): void {
 	if (outcome.disposition === 'exchange' || outcome.disposition === 'escalate')
 		cautions.push(CAUTIONS.escalate);
 	if (outcome.rule === 'zone.phototherapy') cautions.push(CAUTIONS.workup);
+	if (isLikelyToCross(decision)) cautions.push(CAUTIONS['crossing-likely']);
 	cautionHome(decision, cautions);
 	if (deciding && ratioReached(decision)) cautions.push(CAUTIONS.ratio);
 	if (
@@ -101,6 +108,14 @@ export function cautionAap(decision: Made, cautions: Caution[]): void {
 	if (known.treatment.last) cautionTreatment(decision, cautions);
 	if (decision.readings.length > 1 && hasUnconfirmed(decision))
 		cautions.push(CAUTIONS['earlier-unconfirmed']);
+}
+
+/** The study took newborns without treatment in the birth stay and their last value before discharge. */
+function isLikelyToCross({ deciding, case: known }: Made): boolean {
+	if (!deciding || deciding.zone !== 'below' || deciding.atMs > known.dischargeMs) return false;
+	return (
+		known.treatment.last === null && Math.round(deciding.difference * 10) <= edition.CROSSING_WITHIN_TENTHS
+	);
 }
 
 function cautionHome({ outcome, deciding, case: known }: Made, cautions: Caution[]): void {

@@ -22,5 +22,6 @@ export { phototherapyStopLevel, reboundScore, type ReboundScore } from './reboun
 export { STANDARDS, type StandardSummary } from './registry';
 export { rateOfRise } from './pair';
 export { JAUNDICE_RISK_DEFINITIONS, NEUROTOXICITY_RISK_DEFINITIONS, type RiskDefinition } from './risks';
+export { encephalopathyScore, type EncephalopathyScore, type EncephalopathySigns } from './signs';
 export { convert, formatBilirubin } from './units';
 export * from './types';

@@ -58,6 +58,8 @@ export const AFTER_TREATMENT = {
 } as const;
 export const HOME_DAILY_HOURS = 24;
 export const HOME = { fromWeek: 38, fromHours: 48, overLineTenths: 10 } as const;
+/** Kuzniewicz et al., Pediatrics 2021;147(5):e2020019778: last value 0 to 1 mg/dL below the line. */
+export const CROSSING_WITHIN_TENTHS = 10;
 export const RATE = { firstDay: 0.3, later: 0.2 } as const;
 /** Bilirubin (mg/dL) to albumin (g/dL) ratio at which exchange may be considered. */
 export const ALBUMIN_RATIO = { termNoRisk: 8.0, termRisk: 7.2, earlyNoRisk: 7.2, earlyRisk: 6.8 } as const;

@@ -1,0 +1,153 @@
+import * as fc from 'fast-check';
+import { describe, expect, it, vi } from 'vitest';
+import {
+	JAUNDICE_RISKS,
+	NEUROTOXICITY_RISKS,
+	assess,
+	describeResult,
+	thresholdsAt,
+	type AssessmentInput,
+	type StandardId
+} from '../../src/lib/domain/guideline/index';
+import { dueMs, newborns, standardIds } from './arbitraries';
+
+/** A patient limit: a busy machine must not fail a property. */
+vi.setConfig({ testTimeout: 120_000 });
+const RUNS = Number(process.env['PROPERTY_RUNS'] ?? 500);
+
+const weeks = (standard: StandardId) => fc.integer({ min: standard === 'aap-2022' ? 35 : 23, max: 44 });
+const lookups = standardIds.chain((standard) =>
+	fc.record({
+		standard: fc.constant(standard),
+		weeks: weeks(standard),
+		hours: fc.integer({ min: 60, max: 336 * 60 }).map((minutes) => minutes / 60)
+	})
+);
+
+function linesOf(standard: StandardId, wanted: number, hours: number, atRisk = false) {
+	const found = thresholdsAt(
+		{ standard, gestationalAge: { weeks: wanted, days: 0 }, neurotoxicityRisks: atRisk ? ['sepsis'] : [] },
+		hours
+	);
+	if (!found.ok) throw new Error(JSON.stringify(found.error));
+	return found.value;
+}
+
+describe('lines', () => {
+	it('are never lowered by a higher gestational age', () => {
+		fc.assert(
+			fc.property(lookups, fc.boolean(), ({ standard, weeks: lower, hours }, atRisk) => {
+				const a = linesOf(standard, lower, hours, atRisk);
+				const b = linesOf(standard, Math.min(lower + 1, 44), hours, atRisk);
+				expect(b.phototherapy).toBeGreaterThanOrEqual(a.phototherapy);
+				expect(b.exchange).toBeGreaterThanOrEqual(a.exchange);
+			}),
+			{ numRuns: RUNS }
+		);
+	});
+
+	it('are never raised by a risk factor', () => {
+		fc.assert(
+			fc.property(lookups, ({ standard, weeks: wanted, hours }) => {
+				const without = linesOf(standard, wanted, hours);
+				const with_ = linesOf(standard, wanted, hours, true);
+				expect(with_.phototherapy).toBeLessThanOrEqual(without.phototherapy);
+				expect(with_.exchange).toBeLessThanOrEqual(without.exchange);
+			}),
+			{ numRuns: RUNS }
+		);
+	});
+
+	it('stand in order: phototherapy, escalation, exchange', () => {
+		fc.assert(
+			fc.property(lookups, fc.boolean(), ({ standard, weeks: wanted, hours }, atRisk) => {
+				const { phototherapy, escalation, exchange } = linesOf(standard, wanted, hours, atRisk);
+				expect(phototherapy).toBeLessThan(escalation ?? exchange);
+				if (escalation !== undefined) expect(escalation).toBeLessThan(exchange);
+			}),
+			{ numRuns: RUNS }
+		);
+	});
+
+	it('meet only at birth at 38 weeks by NICE, where both are printed as 100', () => {
+		expect(linesOf('nice-cg98', 38, 0)).toEqual({ phototherapy: 100, exchange: 100, unit: 'umol/L' });
+	});
+});
+
+/** The same newborn with the deciding value raised. */
+function raised(input: AssessmentInput, by: number): AssessmentInput | null {
+	const before = assess(input);
+	if (!before.ok || before.value.decidingIndex === null) return null;
+	const index = before.value.decidingIndex;
+	return {
+		...input,
+		bilirubin: input.bilirubin.map((one, i) =>
+			i === index ? { ...one, total: Math.round((one.total + by) * 10) / 10 } : one
+		)
+	};
+}
+
+describe('what follows', () => {
+	it('is never later for a higher value', () => {
+		fc.assert(
+			fc.property(newborns(), fc.integer({ min: 1, max: 80 }), (input, step) => {
+				const higher = raised(input, input.standard === 'aap-2022' ? step / 10 : step);
+				if (higher) expect(dueMs(higher)).toBeLessThanOrEqual(dueMs(input));
+			}),
+			{ numRuns: RUNS }
+		);
+	});
+
+	it('is never later for an added neurotoxicity risk', () => {
+		fc.assert(
+			fc.property(
+				newborns({ dischargedBefore: false }),
+				fc.constantFrom(...NEUROTOXICITY_RISKS),
+				(input, risk) => {
+					const more = { ...input, neurotoxicityRisks: [...new Set([...input.neurotoxicityRisks, risk])] };
+					expect(dueMs(more)).toBeLessThanOrEqual(dueMs(input));
+				}
+			),
+			{ numRuns: RUNS }
+		);
+	});
+
+	it('is never later for an added jaundice risk, whenever discharge was', () => {
+		fc.assert(
+			fc.property(newborns({ dischargedBefore: true }), fc.constantFrom(...JAUNDICE_RISKS), (input, risk) => {
+				const more = { ...input, jaundiceRisks: [...new Set([...input.jaundiceRisks, risk])] };
+				expect(dueMs(more)).toBeLessThanOrEqual(dueMs(input));
+			}),
+			{ numRuns: RUNS }
+		);
+	});
+
+	it('is what the last step of the trace says', () => {
+		fc.assert(
+			fc.property(newborns({ dischargedBefore: true }), (input) => {
+				const result = assess(input);
+				if (!result.ok) throw new Error('refused');
+				const { trace, disposition, window } = result.value;
+				expect(trace.at(-1)?.output).toBe(describeResult(disposition, window));
+				for (const step of trace) {
+					expect(step.says.length).toBeGreaterThan(10);
+					expect(step.source.length).toBeGreaterThan(3);
+				}
+			}),
+			{ numRuns: RUNS }
+		);
+	});
+
+	it('has a window that ends after it begins, and one only where something is to follow', () => {
+		fc.assert(
+			fc.property(newborns({ dischargedBefore: true }), (input) => {
+				const result = assess(input);
+				if (!result.ok) throw new Error('refused');
+				const { window, disposition } = result.value;
+				if (disposition === 'follow-up' || disposition === 'delay-discharge') expect(window).not.toBeNull();
+				if (window) expect(window.until.getTime()).toBeGreaterThan(window.from.getTime());
+			}),
+			{ numRuns: RUNS }
+		);
+	});
+});
