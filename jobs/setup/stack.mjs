@@ -14,6 +14,8 @@ import { run, startService, tail, waitUntil } from './processes.mjs';
  */
 
 const READY_MS = 120_000;
+/** Written by jobs/run-worker.ts once it has everything it needs. */
+const WORKER_READY = '"the worker runs"';
 
 /**
  * How a TypeScript file under jobs/ is run: in one process, so that signals reach it.
@@ -56,9 +58,16 @@ export async function startFakes(place) {
 	return service;
 }
 
-/** @param {Place} place */
+/**
+ * Starts a worker and waits for the line with which it says that it is at work, if its log level lets it say so.
+ * @param {Place} place
+ */
 export async function startWorker(place) {
-	return startJob(place, 'worker', 'jobs/worker.ts');
+	const service = await startJob(place, 'worker', 'jobs/worker.ts');
+	const log = join(place.logs, 'worker.log');
+	const speaks = ['info', 'debug', 'trace'].includes(place.variables.LOG_LEVEL ?? 'info');
+	await untilReady(place, service, async () => !speaks || tail(log).includes(WORKER_READY));
+	return service;
 }
 
 /**
