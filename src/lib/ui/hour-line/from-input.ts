@@ -27,7 +27,10 @@ function curveOf(
 	if (untilHour <= fromHour) return [];
 	const { standard, gestationalAge, neurotoxicityRisks, albuminGramsPerDecilitre } = input;
 	const line = { standard, gestationalAge, neurotoxicityRisks, albuminGramsPerDecilitre };
-	const curve = thresholdCurve({ ...line, fromHour, untilHour, stepHours });
+	// Equal steps that end on the last hour: a curve must not stop short of the picture's edge.
+	const steps = Math.ceil((untilHour - fromHour) / stepHours);
+	const even = (untilHour - fromHour) / steps;
+	const curve = thresholdCurve({ ...line, fromHour, untilHour, stepHours: even });
 	return curve.ok ? curve.value : [];
 }
 
