@@ -55,8 +55,11 @@ export const ROUTE_ACCESS: Readonly<Record<string, RouteAccess>> = {
 	'/(staff)/measures': page(['measures.view-site', 'measures.view-all']),
 
 	'/(staff)/discharges': page('discharge.view'),
-	'/(staff)/discharges/new': page('discharge.edit'),
-	'/(staff)/discharges/[followUpId]': page('discharge.view'),
+	'/(staff)/discharges/new': page('discharge.edit', { save: 'discharge.edit', finish: 'discharge.edit' }),
+	'/(staff)/discharges/[followUpId]': page('discharge.view', {
+		save: 'discharge.edit',
+		finish: 'discharge.edit'
+	}),
 	'/(staff)/discharges/[followUpId]/sheet': page('discharge.view'),
 
 	'/(staff)/queue': page('queue.view'),
