@@ -20,13 +20,9 @@ const GRAMS_PER_MOLE = 584.66;
 const UCUM: Readonly<Record<BilirubinUnit, string>> = { 'mg/dL': 'mg/dL', 'umol/L': 'umol/L' };
 
 function byUcum(value: number, from: BilirubinUnit, to: BilirubinUnit): number {
-	const found = UcumLhcUtils.getInstance().convertUnitTo(
-		UCUM[from],
-		value,
-		UCUM[to],
-		false,
-		String(GRAMS_PER_MOLE)
-	);
+	const found = UcumLhcUtils.getInstance().convertUnitTo(UCUM[from], value, UCUM[to], {
+		molecularWeight: GRAMS_PER_MOLE
+	});
 	if (found.status !== 'succeeded' || found.toVal === null) throw new Error(String(found.msg));
 	return found.toVal;
 }
