@@ -10,6 +10,7 @@ import { Explained } from './explained.mjs';
  * @property {string[]} [command] Under node_modules, run by this Node.
  * @property {(root: string) => Promise<void>} [work] In place of a command.
  * @property {Record<string, string>} [env]
+ * @property {string} [needsBuild] The folder that must hold a current build of the web server.
  * @property {string} [report] The file its JSON report is written to.
  * @property {(outcome: import('./counts.mjs').Outcome) => import('./counts.mjs').Counts} count
  * @property {number} minutes When it has to be done; a step that hangs fails instead of holding up the rest.
@@ -104,6 +105,7 @@ export function testSteps(folder) {
 			title: 'Integration tests, against a real MariaDB',
 			...vitest('integration'),
 			env: { BUILD_DIR: buildDir },
+			needsBuild: buildDir,
 			minutes: 30
 		},
 		{
@@ -115,6 +117,7 @@ export function testSteps(folder) {
 				PLAYWRIGHT_JSON_OUTPUT_FILE: browserReport,
 				PLAYWRIGHT_SKIP_BROWSER_DOWNLOAD: '1'
 			},
+			needsBuild: buildDir,
 			report: browserReport,
 			count: countPlaywright,
 			minutes: 30

@@ -3,6 +3,7 @@ import { existsSync, mkdirSync, readFileSync, rmSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import { parseArgs } from 'node:util';
 import { fileURLToPath } from 'node:url';
+import { buildIsCurrent, buildWeb } from './build.mjs';
 import { closingLine, sum } from './counts.mjs';
 import { describe } from './explained.mjs';
 import {
@@ -73,8 +74,10 @@ function runCommand({ command: [program = '', ...args] = [], env, minutes }) {
 /** @param {import('./test-steps.mjs').Step} step */
 async function runStep(step) {
 	if (step.report) rmSync(step.report, { force: true });
-	if (step.work === undefined) return runCommand(step);
 	try {
+		// When the build was not among the chosen steps, or a source was saved since.
+		if (step.needsBuild && !buildIsCurrent(root, step.needsBuild)) await buildWeb(root, step.needsBuild);
+		if (step.work === undefined) return await runCommand(step);
 		await step.work(root);
 		return 0;
 	} catch (error) {
