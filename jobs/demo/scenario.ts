@@ -403,7 +403,7 @@ async function didNotCome(demo: Demo): Promise<void> {
 		family('Achterberg', 'Fenna'),
 		family('Boateng', 'Esi', 1)
 	].entries()) {
-		const under = await homeWithPastVisit(demo, newborn, 20 + 4 * index);
+		const under = await homeWithPastVisit(demo, newborn, 7 + 9 * index);
 		await deskMarks(demo, under, { at: hoursFrom(under.visitAt, 0.6), as: 'missed' });
 		const called = hoursFrom(under.visitAt, 0.9);
 		if (index > 0 && called < demo.now)
@@ -481,7 +481,7 @@ async function cameToTheClinic(demo: Demo): Promise<void> {
 		]
 	];
 	for (const [newborn, below] of came) {
-		const under = await homeWithPastVisit(demo, newborn, 22);
+		const under = await homeWithPastVisit(demo, newborn, 7);
 		await parentConfirms(demo, under, hoursFrom(under.visitAt, -3));
 		await deskMarks(demo, under, { at: hoursFrom(under.visitAt, 0.1), as: 'arrived' });
 		if (below !== null)

@@ -71,7 +71,8 @@ export async function homeWithVisit(demo: Demo, newborn: DemoNewborn, hoursAgo: 
 	const place = await placeInWindow(demo, under, {
 		from: hoursFrom(demo.now, 0.5),
 		until: hoursFrom(demo.now, 96),
-		take: 'first'
+		// Who left this morning comes late in the window, who left earlier is next: a calendar with both.
+		take: hoursAgo < 6 ? 'last' : 'first'
 	});
 	await leave(demo, under, place?.startsAt ?? null);
 	return under;
@@ -83,7 +84,7 @@ export async function homeWithPastVisit(
 	newborn: DemoNewborn,
 	hoursAgo: number
 ): Promise<Underway & { visitAt: Date }> {
-	for (let back = hoursAgo; back <= hoursAgo + 24 * 8; back += 6) {
+	for (let back = hoursAgo; back <= hoursAgo + 24 * 8; back += 2) {
 		const dischargeAt = hoursFrom(demo.now, -back);
 		const clinicId = demo.clinics[newborn.clinic ?? 0].id;
 		const places = await freePlaces(demo, {
