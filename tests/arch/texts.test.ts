@@ -10,11 +10,10 @@ import { LANGUAGES, type Language } from '../../src/lib/domain/messaging/languag
 import { smsReferenceSuffix } from '../../src/lib/domain/messaging/reference';
 import { textSize } from '../../src/lib/domain/messaging/segments';
 import { fieldsIn, render } from '../../src/lib/domain/messaging/template';
-import { isForFamilies, KIND_WORDING, MOST_SEGMENTS } from '../../src/lib/domain/messaging/wording';
+import { faultsOf, isForFamilies, KIND_WORDING, MOST_SEGMENTS } from '../../src/lib/domain/messaging/wording';
 import { DEFAULT_WORDING } from '../../src/lib/server/wording/default-texts';
 import { fieldValues, type FieldFacts } from '../../src/lib/server/wording/field-values';
 import { mailHtml } from '../../src/lib/server/wording/mail-html';
-import { faultsOf } from '../../src/lib/server/services/wording';
 import { englishGrade, longestSentence, spanishGrade } from '../support/reading-grade';
 
 const CHECK_IN_RESULTS = ['emergency', 'today', 'call-back', 'as-planned'] as const;

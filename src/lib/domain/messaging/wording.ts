@@ -1,4 +1,5 @@
 import type { Channel, MessageKind } from './kinds';
+import { wordingFaults, type WordingFault } from './template';
 
 /** What a wording of one kind may and must speak of. */
 export interface KindWording {
@@ -94,3 +95,23 @@ export const isForFamilies = (kind: MessageKind): boolean => kind !== 'duty-find
 
 /** Most parts that a text message may need with the longest real values: GSM-7, and UCS-2 where the script needs it. */
 export const MOST_SEGMENTS = { 'GSM-7': 3, 'UCS-2': 5 } as const;
+
+const FAULT_SENTENCES: Readonly<Record<WordingFault['code'], (what: string) => string>> = {
+	'unknown-field': (what) => `There is no field {${what}} for this message.`,
+	'required-field-absent': (what) => `The field {${what}} must be in the text.`,
+	'stray-brace': (what) => `A single "${what}" is not part of a field. Take it out or complete the field.`
+};
+
+/** Sentences about what is wrong with a wording; empty when it may be saved. */
+export function faultsOf(text: {
+	readonly kind: MessageKind;
+	readonly subject: string | null;
+	readonly body: string;
+}): string[] {
+	const { allowed, required } = KIND_WORDING[text.kind];
+	const faults = [
+		...wordingFaults(text.body, { allowed, required }),
+		...wordingFaults(text.subject ?? '', { allowed, required: [] })
+	];
+	return [...new Set(faults.map(({ code, what }) => FAULT_SENTENCES[code](what)))];
+}

@@ -74,3 +74,13 @@ export async function replanMessage(
 			)
 		);
 }
+
+/** True where a message with this key exists, whatever became of it. */
+export async function isPlanned(db: Reader, dedupeKey: string): Promise<boolean> {
+	const rows = await db
+		.select({ id: messages.id })
+		.from(messages)
+		.where(eq(messages.dedupeKey, dedupeKey))
+		.limit(1);
+	return rows.length > 0;
+}

@@ -2,9 +2,9 @@ import { can } from '../../domain/access/can';
 import type { StaffActor } from '../../domain/access/roles';
 import { CHANNELS, MESSAGE_KINDS, type Channel, type MessageKind } from '../../domain/messaging/kinds';
 import { LANGUAGES, type Language } from '../../domain/messaging/language';
-import { wordingFaults, type WordingFault } from '../../domain/messaging/template';
-import { KIND_WORDING } from '../../domain/messaging/wording';
+import { faultsOf } from '../../domain/messaging/wording';
 import { err, ok, type Result } from '../../domain/result';
+import { recordAccess } from '../audit/record';
 import type { Ctx } from '../context';
 import type { Tx } from '../db/client';
 import { withTx } from '../db/tx';
@@ -71,12 +71,6 @@ export async function getWording(
 	return versions.length === 0 ? err(notFound) : ok(versions);
 }
 
-const FAULT_SENTENCES: Readonly<Record<WordingFault['code'], (what: string) => string>> = {
-	'unknown-field': (what) => `There is no field {${what}} for this message.`,
-	'required-field-absent': (what) => `The field {${what}} must be in the text.`,
-	'stray-brace': (what) => `A single "${what}" is not part of a field. Take it out or complete the field.`
-};
-
 export interface WordingDraft extends WordingPlace {
 	readonly subject: string | null;
 	readonly body: string;
@@ -84,15 +78,17 @@ export interface WordingDraft extends WordingPlace {
 	readonly basedOn: number;
 }
 
-/** Sentences about what is wrong with a wording; empty when it may be saved. */
-export function faultsOf({ kind, subject, body }: Pick<WordingDraft, 'kind' | 'subject' | 'body'>): string[] {
-	const { allowed, required } = KIND_WORDING[kind];
-	const faults = [
-		...wordingFaults(body, { allowed, required }),
-		...wordingFaults(subject ?? '', { allowed, required: [] })
-	];
-	return [...new Set(faults.map(({ code, what }) => FAULT_SENTENCES[code](what)))];
+async function recordChange(
+	tx: Tx,
+	ctx: Ctx,
+	{ organisationId, staffId }: StaffActor,
+	detail: string
+): Promise<void> {
+	await recordAccess(tx, ctx, { organisationId, staffId, action: 'wording.changed', detail });
 }
+
+const placeInWords = ({ kind, channel, language }: WordingPlace): string =>
+	`${kind}, ${channel}, ${language}`;
 
 /** Saves changed words as a new version, in use from now on; it is a draft until somebody says that it was reviewed. */
 export async function saveWording(
@@ -117,6 +113,7 @@ export async function saveWording(
 		const made = { createdBy: staffId, createdAt: ctx.clock.now() };
 		const row = { ...whole, ...made, id: ctx.random.id(), version, subject, body };
 		await insertTemplates(tx, [{ ...row, standing: 'draft', isCurrent: true }]);
+		await recordChange(tx, ctx, actor, `${placeInWords(place)}: version ${version}`);
 		return ok({ version });
 	});
 }
@@ -139,6 +136,7 @@ export async function restoreWording(
 		const { subject, body, standing, reviewedBy } = old;
 		const words = { subject, body, standing, reviewedBy };
 		await insertTemplates(tx, [{ ...whole, ...made, ...words, id: ctx.random.id(), version }]);
+		await recordChange(tx, ctx, actor, `${placeInWords(place)}: version ${wanted} again, as ${version}`);
 		return ok({ version });
 	});
 }
@@ -159,7 +157,9 @@ export async function markReviewed(
 		const row = versions.find((one) => one.version === version);
 		if (row === undefined) return err(notFound);
 		if (!row.isCurrent) return err(conflict('Another version is in use now. Look at it first.'));
-		await markTemplate(tx, row.id, { standing: reviewedBy === null ? 'draft' : 'reviewed', reviewedBy });
+		const standing = reviewedBy === null ? 'draft' : 'reviewed';
+		await recordChange(tx, ctx, actor, `${placeInWords(place)}: version ${version} ${standing}`);
+		await markTemplate(tx, row.id, { standing, reviewedBy });
 		return ok(null);
 	});
 }
