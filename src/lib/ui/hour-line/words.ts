@@ -1,3 +1,4 @@
+import { ARABIC, CHINESE, VIETNAMESE } from './draft-words';
 import type { CheckInResult } from '../../domain/guideline/types';
 import type { VisitKind, VisitState } from '../../domain/followup/visit';
 
@@ -81,5 +82,6 @@ export const SPANISH: HourLineWords = {
 
 /** The dictionary of a language; English where there is none. */
 export function hourLineWords(locale: string): HourLineWords {
-	return locale.startsWith('es') ? SPANISH : ENGLISH;
+	const all = [ENGLISH, SPANISH, VIETNAMESE, CHINESE, ARABIC];
+	return all.find((words) => locale.startsWith(words.locale)) ?? ENGLISH;
 }
