@@ -26,7 +26,7 @@ import { invent, seeded } from './births';
 const PIECE_BYTES = 1 << 18;
 const YEAR_OF_BIRTHS = 4_000_000;
 const RULE_SECONDS = 3;
-const TYPED_INPUTS = 20_000;
+const TYPED_INPUTS = 2_000;
 const ROLES = ['copy', 'assess', 'rule'] as const;
 type Role = (typeof ROLES)[number];
 

@@ -31,9 +31,10 @@ export function check(
 	checkGestationalAge(input, standard, refusals);
 	checkBirth(input, notAfterMs, refusals);
 	if (!Number.isNaN(bornMs)) {
+		const context = { bornMs, notAfterMs, standard, refusals };
 		for (let i = 0; i < input.bilirubin.length; i++) {
 			const measurement = input.bilirubin[i];
-			if (measurement) checkMeasurement(measurement, i, { bornMs, notAfterMs, standard, refusals });
+			if (measurement) checkMeasurement(measurement, i, context);
 		}
 		if (input.phototherapy.length > 0) checkPhototherapy(input, notAfterMs, refusals);
 	}

@@ -23,11 +23,11 @@ export function decide(input: AssessmentInput, standard: Standard): Decision {
 	const readings = read(known, standard);
 	const deciding = decidingOf(readings);
 	const outcome = outcomeOf(deciding, readings, known, standard);
-	const made = { case: known, readings, deciding, outcome };
 	const cautions: Caution[] = [];
-	standard.caution(made, cautions);
-	cautionShared(made, standard, cautions);
-	return { case: known, readings, deciding, outcome, cautions };
+	const decision: Decision = { case: known, readings, deciding, outcome, cautions };
+	standard.caution(decision, cautions);
+	cautionShared(decision, standard, cautions);
+	return decision;
 }
 
 function caseOf(input: AssessmentInput): Case {
