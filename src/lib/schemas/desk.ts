@@ -43,7 +43,12 @@ const whyNot = z.string().trim().max(300, 'At most 300 characters.').default('')
 export const logSchema = z.object({
 	carerId: z.union([recordId, z.literal('')]).default(''),
 	channel: z.enum(ATTEMPT_CHANNELS, 'Say how you tried.').default('call'),
-	outcome: z.enum(ATTEMPT_OUTCOMES, 'Say what came of it.'),
+	/** Nothing is chosen beforehand: a slip would say that a family was reached. */
+	outcome: z
+		.enum(ATTEMPT_OUTCOMES, 'Say what came of it.')
+		.nullable()
+		.default(null)
+		.refine((outcome) => outcome !== null, 'Say what came of it.'),
 	note: z.string().trim().max(500, 'At most 500 characters.').default('')
 });
 

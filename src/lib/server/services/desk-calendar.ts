@@ -50,17 +50,25 @@ async function findChoosingFor(
 	ctx: Ctx,
 	actor: StaffActor,
 	followUpId: string
-): Promise<(ChoosingFor & { readonly clinicId: string }) | null> {
+): Promise<(ChoosingFor & { readonly clinicId: string; readonly timeZone: string }) | null> {
 	const loaded = await findFollowUp(ctx.db, followUpId);
 	if (!loaded || !can(actor, 'visit.manage', resourceOf(loaded))) return null;
 	const ids = [followUpId];
 	const facts = await loadDeskFacts(ctx.db, ids);
 	const [row] = facts ? deskRows(facts, { ids, alerts: [], now: ctx.clock.now() }) : [];
 	if (!row) return null;
-	const { familyName, givenName, recordNumber, stage, visit, clinicId } = row;
+	const { familyName, givenName, recordNumber, stage, visit, clinicId, timeZone } = row;
 	const window = windowCounts(stage) ? loaded.state.window : null;
 	const mayApprove = can(actor, 'visit.approve-outside-window', resourceOf(loaded));
-	return { followUpId, familyName, givenName, recordNumber, stage, visit, window, mayApprove, clinicId };
+	const who = { followUpId, familyName, givenName, recordNumber, stage, visit, window, mayApprove };
+	return { ...who, clinicId, timeZone };
+}
+
+/** The first local day on which a newborn's window can still be met; undefined where none is left. */
+function firstDayOf({ window, timeZone }: ChoosingFor & { timeZone: string }, now: Date): string | undefined {
+	if (!window || window.until < now) return undefined;
+	const first = window.from > now ? window.from : now;
+	return DateTime.fromJSDate(first, { zone: timeZone }).toISODate() ?? undefined;
 }
 
 /** The local dates of the week that holds a day, from Monday. */
@@ -79,7 +87,8 @@ export async function getCalendar(
 	const choosing = asked.forId ? await findChoosingFor(ctx, actor, asked.forId) : null;
 	if (asked.forId && !choosing) return err(notFound);
 	const clinicId = choosing?.clinicId ?? asked.clinicId;
-	const chosen = await chooseClinicDay(ctx, actor, { ...asked, clinicId, action: 'calendar.view' });
+	const on = asked.on ?? (choosing ? firstDayOf(choosing, ctx.clock.now()) : undefined);
+	const chosen = await chooseClinicDay(ctx, actor, { on, clinicId, action: 'calendar.view' });
 	if (!chosen) return err(notFound);
 	const { clinic, day } = chosen;
 	const days = weekOf(day);

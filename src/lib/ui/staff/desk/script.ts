@@ -1,5 +1,6 @@
 import type { CallAim } from '../../../domain/followup/call-script';
-import { formatDayTime, formatSpan } from '../../../format/time';
+import type { FollowUpWindow } from '../../../domain/guideline/types';
+import { formatDayTime, formatSpan, type TimeStyle } from '../../../format/time';
 import { windowTestLabel } from '../../../format/values';
 import type { CallPanel } from '../../../schemas/desk-panel';
 
@@ -11,16 +12,24 @@ export interface ScriptPart {
 	readonly lines: readonly string[];
 }
 
-type Facts = Readonly<Record<'visit' | 'span' | 'clinic' | 'emergency' | 'test', string>> & {
+type Facts = Readonly<Record<'visit' | 'span' | 'offer' | 'clinic' | 'emergency' | 'test', string>> & {
 	readonly laterCheckAsks: string;
 	readonly wish: string;
 };
 
-function factsOf({ row, clinic, laterCheckAsks }: CallPanel): Facts {
+function spanWords(window: FollowUpWindow | null, isPast: boolean, style: TimeStyle): string {
+	if (!window) return 'when the pediatrician says';
+	if (isPast) return 'as soon as can be; the window has passed, so the pediatrician approves the time';
+	return `between ${formatSpan(window.from, window.until, style).replace(' to ', ' and ')}`;
+}
+
+function factsOf({ row, clinic, laterCheckAsks, nowAt }: CallPanel): Facts {
 	const style = { timeZone: row.timeZone };
+	const isPast = row.window !== null && row.window.until < nowAt;
 	return {
 		visit: row.visit ? formatDayTime(row.visit.startsAt, style) : 'no visit yet',
-		span: row.window ? formatSpan(row.window.from, row.window.until, style) : 'as the pediatrician says',
+		span: spanWords(row.window, isPast, style),
+		offer: isPast ? 'When could you come at the earliest?' : 'Which of these times can you come?',
 		clinic: clinic.name,
 		emergency: clinic.emergencyNumber,
 		test: row.window ? windowTestLabel(row.window.test) : 'by clinical judgement',
@@ -49,7 +58,7 @@ const PARTS: Readonly<Record<CallAim, (facts: Facts) => Omit<ScriptPart, 'aim'>>
 		title: 'The family did not come',
 		lines: [
 			`“We expected you at ${f.clinic}. Is the newborn well?” Pass on to the pediatrician what you hear.`,
-			`Make a new visit. The newborn has to be seen: ${f.span}.`
+			`Make a new visit. The newborn has to be seen ${f.span}.`
 		]
 	}),
 	'not-marked': (f) => ({
@@ -72,23 +81,20 @@ const PARTS: Readonly<Record<CallAim, (facts: Facts) => Omit<ScriptPart, 'aim'>>
 	}),
 	'other-time': (f) => ({
 		title: 'They ask for another time',
-		lines: [
-			`The visit is ${f.visit} and stands until it is moved.${f.wish}`,
-			`Offer a time between ${f.span}.`
-		]
+		lines: [`The visit is ${f.visit} and stands until it is moved.${f.wish}`, `Offer a time ${f.span}.`]
 	}),
 	'make-visit': (f) => ({
 		title: 'Make the visit',
 		lines: [
-			`The newborn has to be seen: ${f.span}. Test: ${f.test}.`,
-			`“Your baby needs a check for jaundice at ${f.clinic}. Which of these times can you come?”`
+			`The newborn has to be seen ${f.span}. Test: ${f.test}.`,
+			`“Your baby needs a check for jaundice at ${f.clinic}. ${f.offer}”`
 		]
 	}),
 	'get-confirmation': (f) => ({
 		title: 'Get the confirmation',
 		lines: [
 			`“The visit is ${f.visit} at ${f.clinic}. Can you come?”`,
-			`If not, move it to a time between ${f.span}. Do not leave them without one.`
+			`If not, move it to a time ${f.span}. Do not leave them without one.`
 		]
 	}),
 	'check-number': () => ({

@@ -1,7 +1,8 @@
 import type { AttemptChannel, AttemptOutcome } from '../../../domain/followup/attempt';
+import type { VisitKind, VisitState } from '../../../domain/followup/visit';
 import type { QueueGroup } from '../../../domain/followup/desk-queue';
 import type { Language } from '../../../domain/messaging/language';
-import { CHECK_IN_WORDS } from '../../../format/words';
+import { CHECK_IN_WORDS, VISIT_STATE_WORDS } from '../../../format/words';
 import type { LastContact } from '../../../schemas/desk-view';
 
 /** The desk's words for its own vocabulary. */
@@ -72,3 +73,16 @@ export function contactWords(contact: LastContact): string {
 			return SIMPLE[contact.kind];
 	}
 }
+
+/** States of a visit where there is little room. */
+export const VISIT_STATE_SHORT: Readonly<Record<VisitState, string>> = {
+	...VISIT_STATE_WORDS,
+	booked: 'Not confirmed'
+};
+
+/** Kinds of visit where there is little room. */
+export const VISIT_KIND_SHORT: Readonly<Record<VisitKind, string>> = {
+	check: 'Check',
+	'blood-draw': 'Blood draw',
+	'feeding-help': 'Feeding help'
+};

@@ -74,10 +74,11 @@ export const actions: Actions = {
 	log: async (event) => {
 		const [ctx, actor, followUpId] = whoOn(event);
 		const form = await superValidate(event.request, zod4(logSchema), { id: 'log' });
-		const { carerId, ...tried } = form.data;
-		return answer(event, form, 'logged', () =>
-			logAttempt(ctx, actor, { ...tried, followUpId, carerId: carerId || null })
-		);
+		const { carerId, outcome, channel, note } = form.data;
+		return answer(event, form, 'logged', async () => {
+			if (outcome === null) return err(invalid('Say what came of it.', 'outcome'));
+			return logAttempt(ctx, actor, { followUpId, carerId: carerId || null, channel, outcome, note });
+		});
 	},
 	book: async (event) => {
 		const [ctx, actor, followUpId] = whoOn(event);
