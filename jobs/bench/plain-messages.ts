@@ -66,7 +66,7 @@ export async function insertPlainMessages(db: Db, order: PlainOrder): Promise<st
 		facts: { to: to(index) },
 		state: 'planned' as const,
 		priority: order.priority ?? 5,
-		runAt: order.runAt ?? new Date(now.getTime() - 1000),
+		runAt: order.runAt ?? new Date(now.getTime() - HOUR),
 		expiresAt: order.expiresAt ?? new Date(now.getTime() + 24 * HOUR),
 		createdAt: now,
 		updatedAt: now

@@ -14,7 +14,9 @@ const environment = z.object({
 	FAKES_INBOUND_URL: z.url().optional(),
 	/** A text message counts as delivered after this long; 0 for no reports at all. */
 	FAKES_REPORT_SECONDS: z.coerce.number().min(0).default(2),
-	/** File that keeps what was sent over a restart; none when absent. */
+	/** Longest time that the SMS service takes to answer, drawn for each call. */
+	FAKES_LATENCY_MS: z.coerce.number().min(0).default(0),
+	/** File that keeps what was sent over a restart; empty for none. By default in DATA_DIR. */
 	FAKES_JOURNAL: z.string().optional(),
 	DATA_DIR: z.string().optional()
 });
@@ -30,6 +32,7 @@ export interface FakesSettings {
 	readonly fromNumber: string;
 	readonly inboundUrl: string | null;
 	readonly reportSeconds: number;
+	readonly latencyMilliseconds: number;
 	readonly journal: string | null;
 }
 
@@ -47,6 +50,12 @@ export function parseFakesSettings(env: Readonly<Record<string, string | undefin
 		fromNumber: parsed.TWILIO_FROM_NUMBER,
 		inboundUrl: parsed.FAKES_INBOUND_URL ?? inbound,
 		reportSeconds: parsed.FAKES_REPORT_SECONDS,
-		journal: parsed.FAKES_JOURNAL ?? (parsed.DATA_DIR ? `${parsed.DATA_DIR}/fakes.jsonl` : null)
+		latencyMilliseconds: parsed.FAKES_LATENCY_MS,
+		journal: journalOf(parsed)
 	};
+}
+
+function journalOf({ FAKES_JOURNAL: file, DATA_DIR: folder }: z.output<typeof environment>): string | null {
+	if (file !== undefined) return file === '' ? null : file;
+	return folder === undefined || folder === '' ? null : `${folder}/fakes.jsonl`;
 }

@@ -114,6 +114,7 @@ async function answer(
 		response.destroy();
 		return;
 	}
+	if (settings.latencyMilliseconds > 0) await after((Math.random() * settings.latencyMilliseconds) / 1000);
 	if (trouble !== null && (kind === 'slow' || kind === 'silent')) await after(trouble.seconds);
 	if (kind === 'silent') response.destroy();
 	else if (kind === 'server-error-taken') refuse(response, 500, 20500, 'Internal Server Error');

@@ -1,8 +1,10 @@
+import { OPENS_AFTER } from '../../domain/messaging/breaker';
 import type { Channel } from '../../domain/messaging/kinds';
 import { makeCall } from './call';
 import { Lease } from './lease';
 import { pause } from './pause';
 import type { Held, Outbox } from './port';
+import { newsOf } from './record';
 import { Recorder } from './recorder';
 import { renewLease } from './renew';
 import { giveBack, takeDue } from './take';
@@ -27,12 +29,14 @@ export class Lane {
 	#ready: InHand[] = [];
 	#isStopped = false;
 	#claims = 0;
+	/** Since the last outcomes were recorded; the next calls wait for what all workers make of it. */
+	#failuresInARow = 0;
 	#wake: (() => void) | null = null;
 
 	constructor(outbox: Outbox, channel: Channel) {
 		this.#outbox = outbox;
 		this.#channel = channel;
-		this.#recorder = new Recorder(outbox, channel, () => this.poke());
+		this.#recorder = new Recorder(outbox, channel, () => this.#recorded());
 	}
 
 	/** Takes no more messages; what was not begun is given back, calls under way end and are recorded. */
@@ -110,7 +114,7 @@ export class Lane {
 
 	#call(): void {
 		const { concurrency, callSeconds } = this.#outbox.settings;
-		while (this.#calling.size < concurrency) {
+		while (this.#calling.size < concurrency && this.#mayCall()) {
 			const next = this.#ready.shift();
 			if (next === undefined) return;
 			// A call must end within its lease: past it, somebody else may be asking the provider about it already.
@@ -119,9 +123,21 @@ export class Lane {
 		}
 	}
 
+	#mayCall(): boolean {
+		return this.#failuresInARow < OPENS_AFTER && this.#recorder.pausedUntil === null;
+	}
+
+	#recorded(): void {
+		this.#failuresInARow = 0;
+		this.#call();
+		this.poke();
+	}
+
 	#begin(held: Held): void {
 		this.#calling.add(held);
 		void makeCall(this.#outbox, held).then((called) => {
+			const { failures, pauseSeconds } = newsOf([called]);
+			this.#failuresInARow = pauseSeconds ? OPENS_AFTER : failures > 0 ? this.#failuresInARow + 1 : 0;
 			this.#recorder.add(called);
 			this.#calling.delete(held);
 			this.#call();

@@ -54,16 +54,17 @@ async function findSender(db: Reader, channel: Channel): Promise<SenderState> {
 	return row ?? FRESH;
 }
 
+/** The row is made first where there is none: a lock on nothing would let two workers have the same calls. */
 async function lockSender(tx: Tx, channel: Channel): Promise<SenderState> {
-	const [row] = await tx.select().from(senders).where(eq(senders.id, channel)).for('update');
-	return row ?? FRESH;
+	const locked = () => tx.select().from(senders).where(eq(senders.id, channel)).for('update');
+	const [row] = await locked();
+	if (row !== undefined) return row;
+	await tx.insert(senders).ignore().values({ id: channel });
+	return (await locked())[0] ?? FRESH;
 }
 
 async function saveSender(tx: Tx, channel: Channel, state: SenderState): Promise<void> {
 	const { pausedUntil, failuresInARow, rateFreeAt } = state;
 	const values = { pausedUntil, failuresInARow, rateFreeAt };
-	await tx
-		.insert(senders)
-		.values({ id: channel, ...values })
-		.onDuplicateKeyUpdate({ set: values });
+	await tx.update(senders).set(values).where(eq(senders.id, channel));
 }
