@@ -84,6 +84,7 @@ function messageSteps(form: DischargeForm): string[] {
 
 /** The button's words: what it does, in the order it does it. */
 export function finishLabel(form: DischargeForm, setting: FinishSetting): string {
+	if (setting.live.state !== 'assessed') return 'Finish the discharge';
 	if (!mayGoHome(setting.live)) return 'Hand over against the standard';
 	if (setting.hasVisit) return 'Message the family and hand over';
 	return readPlace(form.place)
