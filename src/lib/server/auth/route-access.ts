@@ -50,6 +50,7 @@ export const ROUTE_ACCESS: Readonly<Record<string, RouteAccess>> = {
 		endSession: 'signed-in',
 		signOutEverywhere: 'signed-in'
 	}),
+	'/(staff)/account/feeds': page('signed-in', { make: 'signed-in', revoke: 'signed-in' }),
 	'/(staff)/help': page('signed-in'),
 	'/(staff)/search': page('follow-up.view'),
 	'/(staff)/measures': page(['measures.view-site', 'measures.view-all']),
@@ -95,7 +96,11 @@ export const ROUTE_ACCESS: Readonly<Record<string, RouteAccess>> = {
 		settle: 'alert.settle'
 	}),
 	'/(staff)/follow-ups/[followUpId]/summary': page('values.view'),
-	'/(staff)/follow-ups/[followUpId]/thread': page('thread.view'),
+	'/(staff)/follow-ups/[followUpId]/thread': page('thread.view', {
+		write: 'thread.write',
+		read: 'thread.write',
+		assign: 'thread.write'
+	}),
 
 	'/(admin)/people': page('people.manage', {
 		invite: 'people.manage',
@@ -115,6 +120,11 @@ export const ROUTE_ACCESS: Readonly<Record<string, RouteAccess>> = {
 		removeClosedDay: 'openings.edit'
 	}),
 	'/(admin)/wording': page('wording.manage'),
+	'/(admin)/wording/[kind]/[channel]/[language]': page('wording.manage', {
+		save: 'wording.manage',
+		restore: 'wording.manage',
+		review: 'wording.manage'
+	}),
 	'/(admin)/standard': page('policy.manage', { standard: 'policy.manage', policy: 'policy.manage' }),
 	'/(admin)/operations': page('operations.view'),
 	'/(admin)/access-record': page(['access-record.view-all', 'access-record.view-own']),
