@@ -71,7 +71,7 @@ describe('the fast reader and writer', () => {
 			['sepsis', 'x'],
 			true,
 			'2026-02-30T10:00:00Z',
-			1e999
+			Infinity
 		);
 		const records = births(200, 12);
 		const keys = [
