@@ -1,11 +1,14 @@
+import { clearLine, cursorTo } from 'node:readline';
 import { SingleBar } from 'cli-progress';
 
 export interface Progress {
 	readonly advance: (bytes: number, records: number) => void;
+	/** Takes the bar off its line, so that something else can be written there; the next advance draws it again. */
+	readonly makeRoom: () => void;
 	readonly stop: () => void;
 }
 
-const SILENT: Progress = { advance: () => {}, stop: () => {} };
+const SILENT: Progress = { advance: () => {}, makeRoom: () => {}, stop: () => {} };
 
 /** A bar on standard error, only where that is a terminal; without a total it counts records. */
 export function startProgress(stream: NodeJS.WriteStream, totalBytes: number | null): Progress {
@@ -28,6 +31,10 @@ export function startProgress(stream: NodeJS.WriteStream, totalBytes: number | n
 			doneBytes += bytes;
 			doneRecords += records;
 			bar.update(doneBytes, { records: doneRecords.toLocaleString('en') });
+		},
+		makeRoom: () => {
+			cursorTo(stream, 0);
+			clearLine(stream, 0);
 		},
 		stop: () => bar.stop()
 	};

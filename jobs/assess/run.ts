@@ -62,9 +62,9 @@ class Work {
 	private readonly results: Sink;
 	private readonly reasons: Sink;
 
-	constructor({ output, errors }: Batch) {
+	constructor({ output, errors, progress }: Batch) {
 		this.results = new Sink(output);
-		this.reasons = new Sink(errors);
+		this.reasons = new Sink(errors, progress.makeRoom);
 	}
 
 	add(lineNumber: number, { text, refused }: LineResult): void {

@@ -7,7 +7,10 @@ const FLUSH_AT = 1 << 16;
 export class Sink {
 	private held = '';
 
-	constructor(private readonly stream: Writable) {}
+	constructor(
+		private readonly stream: Writable,
+		private readonly beforeWriting: () => void = () => {}
+	) {}
 
 	/** Adds a line; call `settle` now and then, or memory grows. */
 	line(text: string): void {
@@ -19,6 +22,8 @@ export class Sink {
 		if (this.held.length < FLUSH_AT && !isLast) return;
 		const text = this.held;
 		this.held = '';
-		if (text !== '' && !this.stream.write(text)) await once(this.stream, 'drain');
+		if (text === '') return;
+		this.beforeWriting();
+		if (!this.stream.write(text)) await once(this.stream, 'drain');
 	}
 }

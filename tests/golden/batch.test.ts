@@ -171,7 +171,11 @@ describe('lines of a stream', () => {
 		const lines = births(3000, 16).map((one) => `${JSON.stringify(one)}\n`);
 		const output = new PassThrough({ highWaterMark: 1024 });
 		let most = 0;
-		const silent = { advance: () => (most = Math.max(most, output.writableLength)), stop: () => {} };
+		const silent = {
+			advance: () => (most = Math.max(most, output.writableLength)),
+			makeRoom: () => {},
+			stop: () => {}
+		};
 		const done = runBatch({
 			input: Readable.from(lines.map((line) => Buffer.from(line))),
 			format: 'json',
