@@ -9,7 +9,8 @@ export interface WordList {
 	readonly stop: readonly string[];
 	readonly start: readonly string[];
 	readonly help: readonly string[];
-	readonly courtesy: readonly string[];
+	readonly thanks: readonly string[];
+	readonly greeting: readonly string[];
 	/** Anywhere in the message; rather one too many than one too few. */
 	readonly alarm: readonly string[];
 }
@@ -35,7 +36,8 @@ export const WORD_LISTS: Readonly<Record<Language, WordList>> = {
 		),
 		start: list('start, unstop, begin, resume, opt in, optin'),
 		help: list('help, info, help me, ?'),
-		courtesy: list('thanks, thank you, thx, please, hi, hello, good morning'),
+		thanks: list('thanks, thank you, thx'),
+		greeting: list('please, hi, hello, good morning'),
 		alarm: list(
 			'not waking, wont wake, won t wake, will not wake, cannot wake, cant wake, can t wake, can not wake, hard to wake, doesnt wake, doesn t wake, does not wake, not wake up, unconscious, unresponsive, not responding, limp, floppy, lifeless, not breathing, stopped breathing, stops breathing, breathing, gasping, choking, turning blue, is blue, blue lips, seizure, seizures, convulsion, convulsions, fits, having a fit, shaking, twitching, jerking, arching, arched, arches, high pitched, high pitch, shrill, screaming, wont feed, won t feed, will not feed, not feeding, wont eat, won t eat, will not eat, not eating, refuses to eat, refuses to feed, wont drink, won t drink, not drinking, wont nurse, won t nurse, not nursing, wont latch, won t latch, fever, very hot, too cold, very cold, emergency, ambulance, 911, 112, 999, dying, dead, bleeding, blood in, is bleeding, white poop, pale poop, white stool, pale stool, white stools, pale stools, grey stool, gray stool, clay colored, clay coloured, dark urine, dark pee, orange'
 		)
@@ -50,7 +52,8 @@ export const WORD_LISTS: Readonly<Record<Language, WordList>> = {
 		stop: list('parar, pare, alto, detener, baja, cancelar, no mas mensajes, basta, terminar'),
 		start: list('empezar, iniciar, comenzar, reanudar, alta, continuar'),
 		help: list('ayuda, informacion, ayudeme'),
-		courtesy: list('gracias, muchas gracias, por favor, hola, buenos dias, buenas tardes, buenas'),
+		thanks: list('gracias, muchas gracias'),
+		greeting: list('por favor, hola, buenos dias, buenas tardes, buenas'),
 		alarm: list(
 			'no despierta, no se despierta, no puedo despertar, no lo puedo despertar, no la puedo despertar, no podemos despertar, cuesta despertar, dificil de despertar, inconsciente, no responde, no reacciona, flacido, flacida, flojito, flojita, aguado, aguada, desguanzado, desguanzada, no respira, deja de respirar, dejo de respirar, respira, respirar, respiracion, se ahoga, ahogando, morado, morada, azul, convulsion, convulsiones, convulsiona, ataque, tiembla, temblando, temblores, sacudidas, se arquea, arqueado, arqueada, arquea, llanto agudo, llora agudo, grito agudo, chillido, no come, no quiere comer, no mama, no quiere mamar, no toma, no quiere tomar, no se alimenta, no agarra el pecho, fiebre, calentura, tiene temperatura, con temperatura, muy caliente, muy frio, muy fria, emergencia, urgencia, urgente, ambulancia, 911, se muere, muriendo, muerto, muerta, con sangre, sangrando, sangra, popo blanco, popo blanca, caca blanca, caca palida, heces blancas, heces palidas, orina oscura, pipi oscuro, naranja, anaranjado, anaranjada'
 		)
@@ -65,7 +68,8 @@ export const WORD_LISTS: Readonly<Record<Language, WordList>> = {
 		stop: list('dung, dung lai, ngung, dung nhan tin, ket thuc'),
 		start: list('bat dau, tiep tuc'),
 		help: list('giup, tro giup, giup do, giup toi, thong tin'),
-		courtesy: list('cam on, xin cam on, lam on, vui long, xin chao, chao'),
+		thanks: list('cam on, xin cam on'),
+		greeting: list('lam on, vui long, xin chao, chao'),
 		alarm: list(
 			'khong thuc, khong danh thuc, goi khong day, kho danh thuc, khong tinh, bat tinh, li bi, lo mo, mem nhun, ru xuong, khong tho, ngung tho, kho tho, tim tai, tim moi, co giat, giat minh, run ray, run nguoi, uon nguoi, uon cong, uon lung, khoc the, khoc ret, bo bu, khong bu, khong chiu bu, khong an, bo an, sot, rat nong, rat lanh, cap cuu, khan cap, xe cuu thuong, 911, chet, chay mau, phan trang, phan bac mau, phan nhat, nuoc tieu sam, nuoc tieu dam, mau cam'
 		)
@@ -78,7 +82,8 @@ export const WORD_LISTS: Readonly<Record<Language, WordList>> = {
 		stop: list('停止, 退订, 取消, 停, 停止短信, 结束, 不要再发'),
 		start: list('开始, 恢复, 继续, 订阅'),
 		help: list('帮助, 求助, 信息'),
-		courtesy: list('谢谢, 感谢, 请, 你好, 您好'),
+		thanks: list('谢谢, 感谢'),
+		greeting: list('请, 你好, 您好'),
 		alarm: list(
 			'叫不醒, 唤不醒, 不醒, 醒不来, 醒不过来, 昏迷, 昏睡, 没反应, 没有反应, 软绵绵, 瘫软, 无力, 没力气, 不呼吸, 没呼吸, 停止呼吸, 呼吸, 喘不, 发紫, 发青, 嘴唇青, 抽搐, 抽筋, 惊厥, 痉挛, 发抖, 后仰, 角弓反张, 尖叫, 尖声, 高声哭, 哭声尖, 不吃, 不喝, 拒奶, 不肯吃, 吃不下, 不吸, 发烧, 发热, 高烧, 很烫, 很冷, 急救, 紧急, 急诊, 救护车, 救命, 911, 死, 流血, 出血, 白色大便, 大便白, 大便发白, 陶土, 灰白, 尿深, 尿很黄, 深色尿, 橙色'
 		)
@@ -93,7 +98,8 @@ export const WORD_LISTS: Readonly<Record<Language, WordList>> = {
 		stop: list('توقف, قف, ايقاف, اوقف, الغاء, اوقفوا الرسائل'),
 		start: list('ابدا, بدء, استئناف, استمرار'),
 		help: list('مساعده, ساعدوني, معلومات'),
-		courtesy: list('شكرا, شكرا لكم, من فضلك, مرحبا, السلام عليكم'),
+		thanks: list('شكرا, شكرا لكم'),
+		greeting: list('من فضلك, مرحبا, السلام عليكم'),
 		alarm: list(
 			'لا يستيقظ, لا تستيقظ, لا يصحى, لا تصحى, ما يصحى, ما تصحى, صعب الاستيقاظ, فاقد الوعي, فاقده الوعي, لا يستجيب, لا تستجيب, رخو, مرتخي, مرتخيه, لا يتنفس, لا تتنفس, توقف التنفس, التنفس, تنفس, يختنق, تختنق, ازرق, زرقاء, تشنج, اختلاج, نوبه, يرتجف, ترتجف, رجفه, تقوس, يتقوس, تتقوس, بكاء حاد, صراخ, لا يرضع, لا ترضع, يرفض الرضاعه, ترفض الرضاعه, ما يرضع, ما ترضع, لا ياكل, لا تاكل, حمى, حراره, سخونه, ساخن جدا, بارد جدا, طوارئ, طوارى, اسعاف, 911, يموت, تموت, مات, نزيف, براز ابيض, براز شاحب, بول غامق, بول داكن, برتقالي'
 		)

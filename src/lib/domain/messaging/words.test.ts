@@ -35,6 +35,7 @@ describe('words of families', () => {
 		['Thanks!', 'thanks'],
 		['muchas gracias', 'thanks'],
 		['cảm ơn', 'thanks'],
+		['hello?', 'words'],
 		['Is it ok to bring her brother?', 'words'],
 		['please do not stop the messages', 'words'],
 		['', 'words'],

@@ -55,7 +55,8 @@ function simplified(language: Language): Simple {
 		stop: byLength(list.stop),
 		start: byLength(list.start),
 		help: byLength(list.help),
-		courtesy: byLength(list.courtesy),
+		thanks: byLength(list.thanks),
+		greeting: byLength(list.greeting),
 		alarm: byLength(list.alarm)
 	};
 }
@@ -87,7 +88,7 @@ const isOneOf = (text: string, meaning: keyof WordList): boolean =>
 function withoutCourtesy(text: string): string {
 	let rest = ` ${text} `;
 	for (const language of LANGUAGES) {
-		for (const phrase of LISTS[language].courtesy) {
+		for (const phrase of [...LISTS[language].thanks, ...LISTS[language].greeting]) {
 			rest = language === 'zh' ? rest.replace(phrase, ' ') : rest.replace(` ${phrase} `, '  ');
 		}
 	}
@@ -104,7 +105,8 @@ export function understand(text: string): Understood {
 	const simple = simplify(text);
 	const core = withoutCourtesy(simple);
 	const number = /^\d$/.test(core) ? Number(core) : null;
-	if (core === '') return { means: simple === '' ? 'words' : 'thanks', number: null, isAlarming: false };
+	if (core === '')
+		return { means: holdsAny(simple, 'thanks') ? 'thanks' : 'words', number: null, isAlarming: false };
 	if (isOneOf(core, 'stop')) return { means: 'stop', number, isAlarming: false };
 	if (isOneOf(core, 'start')) return { means: 'start', number, isAlarming: false };
 	if (holdsAny(simple, 'alarm')) return { means: 'words', number, isAlarming: true };

@@ -1,6 +1,6 @@
 import { and, asc, desc, eq, gt, inArray, isNull, ne, or } from 'drizzle-orm';
 import type { Reader, Tx } from '../db/client';
-import { followUps, visits } from '../db/schema/follow-up';
+import { alerts, followUps, visits } from '../db/schema/follow-up';
 import { messages, threadEntries } from '../db/schema/messaging';
 import { carers, newborns } from '../db/schema/newborn';
 import { staff } from '../db/schema/staff';
@@ -123,4 +123,23 @@ export async function listThreadMessages(db: Reader, followUpId: string) {
 		.from(messages)
 		.where(and(eq(messages.followUpId, followUpId), ne(messages.state, 'withdrawn')))
 		.orderBy(asc(messages.runAt), asc(messages.id));
+}
+
+/** Settles alerts by what raised them; those that are settled already stay as they are. Alarming words are never settled so. */
+export async function settleAlertsByKey(
+	tx: Tx,
+	keys: readonly string[],
+	{ at, how }: { readonly at: Date; readonly how: string }
+): Promise<void> {
+	if (keys.length === 0) return;
+	await tx
+		.update(alerts)
+		.set({ settledAt: at, settledHow: how, climbAt: null })
+		.where(
+			and(
+				inArray(alerts.dedupeKey, [...keys]),
+				eq(alerts.kind, 'words-from-family'),
+				isNull(alerts.settledAt)
+			)
+		);
 }

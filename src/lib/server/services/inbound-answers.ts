@@ -4,7 +4,7 @@ import type { Ctx } from '../context';
 import type { Tx } from '../db/client';
 import { withTx } from '../db/tx';
 import { insertMessages } from '../repos/messages';
-import type { PhoneFollowUp, ThreadEntryRow } from '../repos/thread';
+import { settleAlertsByKey, type PhoneFollowUp, type ThreadEntryRow } from '../repos/thread';
 import { raiseAlert } from './alerts';
 
 const MINUTE = 60_000;
@@ -77,6 +77,22 @@ interface Words {
 	readonly isUncertain: boolean;
 }
 
+const wordsKey = (entryId: string, followUpId: string, role: string, isUncertain: boolean): string =>
+	`words ${entryId} ${followUpId} ${role}${isUncertain ? ' uncertain' : ''}`;
+
+/** Once the family has said which newborn is meant, the words are owed there and no longer elsewhere. */
+export async function settleUncertain(
+	ctx: Ctx,
+	entryIds: readonly string[],
+	known: readonly PhoneFollowUp[]
+): Promise<void> {
+	const keys = entryIds.flatMap((id) =>
+		known.map(({ followUpId }) => wordsKey(id, followUpId, 'desk', true))
+	);
+	const how = 'The family said which newborn is meant.';
+	await withTx(ctx.db, (tx) => settleAlertsByKey(tx, keys, { at: ctx.clock.now(), how }));
+}
+
 /** Words that a person has to read: at once where they alarm, by desk and pediatrician. */
 export async function alertWords(ctx: Ctx, { entry, about, isAlarming, isUncertain }: Words): Promise<void> {
 	const now = ctx.clock.now();
@@ -91,7 +107,7 @@ export async function alertWords(ctx: Ctx, { entry, about, isAlarming, isUncerta
 				siteId: about.clinicId,
 				dueAt: isAlarming ? now : new Date(now.getTime() + READ_WITHIN_HOURS * HOUR),
 				detail: `${which}The family wrote: ${entry.body}`.slice(0, 500),
-				dedupeKey: `words ${entry.id} ${about.followUpId} ${role}`
+				dedupeKey: wordsKey(entry.id, about.followUpId, role, isUncertain)
 			});
 		}
 	});

@@ -1,5 +1,5 @@
 import type { CarerActor } from '../../domain/access/roles';
-import { understand, type Understood } from '../../domain/messaging/words';
+import { understand, type Meaning, type Understood } from '../../domain/messaging/words';
 import type { Ctx } from '../context';
 import { withTx } from '../db/tx';
 import {
@@ -13,7 +13,14 @@ import {
 	type PhoneFollowUp,
 	type ThreadEntryRow
 } from '../repos/thread';
-import { adviseEmergency, alertContactStopped, alertWords, answerBy, askWhich } from './inbound-answers';
+import {
+	adviseEmergency,
+	alertContactStopped,
+	alertWords,
+	answerBy,
+	askWhich,
+	settleUncertain
+} from './inbound-answers';
 import { replanMessages } from './message-plan';
 import { askForAnotherTime, confirmVisit } from './visits';
 
@@ -37,10 +44,12 @@ export async function receiveText(ctx: Ctx, text: IncomingText): Promise<void> {
 	const known = mostRelevant(all);
 	const said = understand(text.body);
 	const chosen = await chosenNewborn(ctx, { text, said, known });
-	const entry = await keepEntry(ctx, { text, said, about: chosen?.about ?? only(known) });
+	const means = chosen === null ? said.means : 'choice';
+	const about = chosen?.about ?? only(known);
+	const entry = await keepEntry(ctx, { text, means, isAlarming: said.isAlarming, about });
 	if (known.length === 0)
 		return ctx.log.warn({ entryId: entry.id }, 'a text came from a number of no family');
-	if (chosen !== null) return actOnWaiting(ctx, chosen);
+	if (chosen !== null) return actOnWaiting(ctx, chosen, known);
 	await act(ctx, { entry, said, known });
 }
 
@@ -56,11 +65,12 @@ const only = (known: readonly PhoneFollowUp[]): PhoneFollowUp | null =>
 
 interface Kept {
 	readonly text: IncomingText;
-	readonly said: Understood;
+	readonly means: Meaning;
+	readonly isAlarming: boolean;
 	readonly about: PhoneFollowUp | null;
 }
 
-async function keepEntry(ctx: Ctx, { text, said, about }: Kept): Promise<ThreadEntryRow> {
+async function keepEntry(ctx: Ctx, { text, means, isAlarming, about }: Kept): Promise<ThreadEntryRow> {
 	const before = await findEntryOfProvider(ctx.db, text.providerId);
 	if (before !== null) return before;
 	const id = ctx.random.id();
@@ -71,8 +81,8 @@ async function keepEntry(ctx: Ctx, { text, said, about }: Kept): Promise<ThreadE
 		phone: text.from,
 		direction: 'in',
 		body: text.body,
-		understoodAs: said.means,
-		isAlarming: said.isAlarming,
+		understoodAs: means,
+		isAlarming,
 		providerId: text.providerId,
 		at: ctx.clock.now()
 	});
@@ -198,9 +208,14 @@ async function chosenNewborn(
 	return about && asked ? { about, waiting, asked } : null;
 }
 
-async function actOnWaiting(ctx: Ctx, { about, waiting, asked }: Chosen): Promise<void> {
+async function actOnWaiting(
+	ctx: Ctx,
+	{ about, waiting, asked }: Chosen,
+	known: readonly PhoneFollowUp[]
+): Promise<void> {
 	const ids = waiting.map(({ id }) => id);
 	await assignEntries(ctx.db, ids, { followUpId: about.followUpId, carerId: about.carer.id });
+	await settleUncertain(ctx, ids, known);
 	await follow(ctx, {
 		entry: { ...asked, followUpId: about.followUpId },
 		said: understand(asked.body),
