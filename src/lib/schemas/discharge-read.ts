@@ -52,9 +52,8 @@ export function readRisks(form: DischargeForm) {
 }
 
 function needText(form: DischargeForm, list: IssueList): void {
-	if (form.recordNumber.trim() === '') list.add('recordNumber', 'Give the record number.');
 	if (form.familyName.trim() === '') list.add('familyName', 'Give the family name.');
-	if (form.clinicId === '') list.add('clinicId', 'Choose the clinic that will see the newborn.');
+	if (form.recordNumber.trim() === '') list.add('recordNumber', 'Give the record number.');
 }
 
 function readBirthWeight(form: DischargeForm, list: IssueList): number | null {
@@ -92,6 +91,7 @@ export function readDischarge(form: DischargeForm): DischargeReading {
 		{ onField: 'dischargeOn', timeField: 'dischargeTime', what: 'the planned discharge' },
 		list
 	);
+	if (form.clinicId === '') list.add('clinicId', 'Choose the clinic that will see the newborn.');
 	if (list.issues.length > 0 || !bornAt || !gestationalAge || !feeding || !plannedDischargeAt) {
 		return { facts: null, issues: list.issues };
 	}
