@@ -3,6 +3,8 @@ import type { Role, StaffActor } from './roles';
 /** What staff may do; the table below is the only place that says who. */
 export type Action =
 	| 'discharge.view'
+	/** Only at a birth unit does a newborn begin to be followed. */
+	| 'discharge.enter'
 	| 'discharge.edit'
 	| 'values.view-latest'
 	| 'values.view'
@@ -41,6 +43,7 @@ const EVERYWHERE = 'organisation';
 const PERMISSIONS: Readonly<Record<Role, Partial<Record<Action, Reach>>>> = {
 	nurse: {
 		'discharge.view': AT_UNIT,
+		'discharge.enter': AT_UNIT,
 		'discharge.edit': AT_UNIT,
 		'values.view-latest': AT_UNIT,
 		'values.view': AT_UNIT,

@@ -56,7 +56,7 @@ export const ROUTE_ACCESS: Readonly<Record<string, RouteAccess>> = {
 	'/(staff)/measures': page(['measures.view-site', 'measures.view-all']),
 
 	'/(staff)/discharges': page('discharge.view'),
-	'/(staff)/discharges/new': page('discharge.edit', { save: 'discharge.edit', finish: 'discharge.edit' }),
+	'/(staff)/discharges/new': page('discharge.enter', { save: 'discharge.enter', finish: 'discharge.enter' }),
 	'/(staff)/discharges/[followUpId]': page('discharge.view', {
 		save: 'discharge.edit',
 		finish: 'discharge.edit'
