@@ -1,6 +1,9 @@
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { assess, thresholdCurve, type AssessmentInput } from '../../src/lib/domain/guideline/index';
 import { assessed, at, codes, newborn, refusedFor, value, windowHours } from './newborn';
+
+/** A busy machine must not fail a test of a rule. */
+vi.setConfig({ testTimeout: 60_000 });
 
 /** Line for 40 weeks without risk at 48 hours: 17.0 mg/dL, exchange 24.0 (public checklist of the AAP tables). */
 const follow = (difference: number, changes: Partial<AssessmentInput> = {}) =>

@@ -1,5 +1,5 @@
 import * as fc from 'fast-check';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import {
 	YELLOW_AREAS,
 	triageCheckIn,
@@ -8,6 +8,9 @@ import {
 	type CheckInResult
 } from '../../src/lib/domain/guideline/index';
 import { at, BORN_AT } from './newborn';
+
+/** A busy machine must not fail a test of a rule. */
+vi.setConfig({ testTimeout: 60_000 });
 
 const WELL: CheckInAnswers = {
 	yellowArea: 'none',

@@ -1,11 +1,14 @@
 import { createHash } from 'node:crypto';
 import { readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { aapTable, niceTable } from '../../jobs/assess/make-editions';
 import { AAP_2022_TABLE } from '../../src/lib/domain/guideline/editions/aap-2022-table';
 import { NICE_CG98_TABLE } from '../../src/lib/domain/guideline/editions/nice-cg98-table';
 import { thresholdCurve, thresholdsAt, type StandardId } from '../../src/lib/domain/guideline/index';
+
+/** A busy machine must not fail a test of a rule. */
+vi.setConfig({ testTimeout: 60_000 });
 
 const csvOf = (name: string): string =>
 	readFileSync(
