@@ -41,22 +41,22 @@ export function testSteps(folder) {
 			title: 'Generated types',
 			command: ['@sveltejs/kit/svelte-kit.js', 'sync'],
 			count: countStep,
-			minutes: 5
+			minutes: 15
 		},
-		{ id: 'texts', title: 'Message catalogues compile', work: compileTexts, count: countStep, minutes: 5 },
+		{ id: 'texts', title: 'Message catalogues compile', work: compileTexts, count: countStep, minutes: 30 },
 		{
 			id: 'format',
 			title: 'Format',
 			command: ['prettier/bin/prettier.cjs', '--check', '--log-level', 'warn', '.'],
 			count: countStep,
-			minutes: 5
+			minutes: 15
 		},
 		{
 			id: 'lint',
 			title: 'Lint',
 			command: ['eslint/bin/eslint.js', '-c', 'tests/lint/eslint.config.js', '--max-warnings', '0', '.'],
 			count: countStep,
-			minutes: 10
+			minutes: 45
 		},
 		{
 			id: 'imports',
@@ -66,30 +66,30 @@ export function testSteps(folder) {
 				...['--output-type', 'err-long', 'src', 'jobs', 'tests']
 			],
 			count: countStep,
-			minutes: 5
+			minutes: 15
 		},
 		{
 			id: 'check',
 			title: 'Types of the web server',
 			command: ['svelte-check/bin/svelte-check', '--tsconfig', './tsconfig.json', '--fail-on-warnings'],
 			count: countStep,
-			minutes: 10
+			minutes: 45
 		},
 		{
 			id: 'tsc',
 			title: 'Types of the jobs and tests',
 			command: ['typescript/bin/tsc', '-p', 'jobs/tsconfig.json', '--noEmit'],
 			count: countStep,
-			minutes: 10
+			minutes: 45
 		},
 		{
 			id: 'schema',
 			title: 'Schema and migrations agree',
 			work: async (root) => (await import('./schema-check.mjs')).checkMigrations(root, folder),
 			count: countStep,
-			minutes: 5
+			minutes: 15
 		},
-		{ id: 'unit', title: 'Unit tests', ...vitest('unit'), minutes: 15 },
+		{ id: 'unit', title: 'Unit tests', ...vitest('unit'), minutes: 30 },
 		{
 			id: 'build',
 			title: 'Build of the web server',
@@ -98,7 +98,7 @@ export function testSteps(folder) {
 				await buildWeb(root, buildDir);
 			},
 			count: countStep,
-			minutes: 10
+			minutes: 45
 		},
 		{
 			id: 'integration',
@@ -106,7 +106,7 @@ export function testSteps(folder) {
 			...vitest('integration'),
 			env: { BUILD_DIR: buildDir },
 			needsBuild: buildDir,
-			minutes: 30
+			minutes: 45
 		},
 		{
 			id: 'e2e',
@@ -120,7 +120,7 @@ export function testSteps(folder) {
 			needsBuild: buildDir,
 			report: browserReport,
 			count: countPlaywright,
-			minutes: 30
+			minutes: 45
 		}
 	];
 }
