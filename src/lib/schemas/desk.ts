@@ -92,7 +92,7 @@ export const DONE = {
 	moved: 'The visit was moved. The family is told by message.',
 	cancelled: 'The visit was cancelled. A new one is owed.',
 	confirmed: 'Marked as confirmed.',
-	arrived: 'Marked as come. The pediatrician is owed the value.',
+	arrived: 'Marked as arrived. The pediatrician is owed the value.',
 	missed: 'Marked as did not come. The family has to be reached.',
 	settled: 'Settled.',
 	asked: 'The pediatrician was asked. Nothing is booked until the answer comes.',

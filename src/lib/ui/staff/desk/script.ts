@@ -64,7 +64,7 @@ const PARTS: Readonly<Record<CallAim, (facts: Facts) => Omit<ScriptPart, 'aim'>>
 	'not-marked': (f) => ({
 		title: 'The visit has begun',
 		lines: [
-			`The visit was for ${f.visit}. If the newborn is here, mark it as come.`,
+			`The visit was for ${f.visit}. If the newborn is here, mark it as arrived.`,
 			'If not, call: “We were expecting you. Are you on your way?” Then mark it as did not come.'
 		]
 	}),
