@@ -57,17 +57,23 @@ export function finishSteps(form: DischargeForm, setting: FinishSetting): string
 	const { clinic, live, hasVisit } = setting;
 	if (!clinic || live.state !== 'assessed') return [];
 	const place = mayGoHome(live) ? readPlace(form.place) : null;
+	const isOpen = mayGoHome(live) && !hasVisit && form.place === '';
 	const visit = hasVisit
 		? 'The visit that was made stays as it is.'
-		: place
-			? `Books ${formatDayTime(place.startsAt, clinic)} at ${clinic.name}: ${VISIT_KIND_WORDS[place.kind].toLowerCase()}.`
-			: `Asks the desk of ${clinic.name} to make the visit with the family.`;
+		: isOpen
+			? 'The visit: choose a place above, or leave it to the clinic’s desk.'
+			: place
+				? `Books ${formatDayTime(place.startsAt, clinic)} at ${clinic.name}: ${VISIT_KIND_WORDS[place.kind].toLowerCase()}.`
+				: `Asks the desk of ${clinic.name} to make the visit with the family.`;
 	return [
 		visit,
 		...messageSteps(form),
 		`Hands the newborn over to ${clinic.name}, with values, risks and your name.`
 	];
 }
+
+/** Keeps a name in another script from turning the sentence around it. */
+const isolated = (text: string): string => `\u2068${text}\u2069`;
 
 function messageSteps(form: DischargeForm): string[] {
 	const carers = readCarers(form, new IssueList());
@@ -77,7 +83,9 @@ function messageSteps(form: DischargeForm): string[] {
 			carer.consentsToMail && carer.email ? 'e-mail' : ''
 		];
 		const by = ways.filter(Boolean).join(' and ');
-		return by ? [`Messages ${carer.name} by ${by} in ${LANGUAGE_NAMES[carer.language]}.`] : [];
+		return by
+			? [`Messages ${isolated(carer.name)} by ${by} in ${isolated(LANGUAGE_NAMES[carer.language])}.`]
+			: [];
 	});
 	return told.length > 0 ? told : ['Messages nobody: nobody agreed to messages, so the paper sheet must do.'];
 }

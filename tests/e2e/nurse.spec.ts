@@ -1,0 +1,176 @@
+import AxeBuilder from '@axe-core/playwright';
+import { expect, test, type Page } from '@playwright/test';
+
+/** Everybody of the demo has the same password; see the sign-ins that the start command prints. */
+const PASSWORD = 'paper ink amber 2026';
+const HOUR = 3_600_000;
+
+async function asNurse(page: Page): Promise<void> {
+	await page.goto('/sign-in');
+	await page.getByLabel('E-mail').fill('nurse@example.org');
+	await page.getByLabel('Password').fill(PASSWORD);
+	await page.getByRole('button', { name: 'Sign in' }).click();
+	await page.waitForURL((url) => !url.pathname.startsWith('/sign-in'));
+}
+
+/** Scripts are running: the buttons that need them are there. */
+async function openNew(page: Page): Promise<void> {
+	await page.goto('/discharges/new');
+	await expect(page.getByRole('button', { name: 'Add a value' })).toBeVisible();
+}
+
+async function expectAccessible(page: Page): Promise<void> {
+	const { violations } = await new AxeBuilder({ page })
+		.withTags(['wcag2a', 'wcag2aa', 'wcag21aa', 'wcag22aa'])
+		.analyze();
+	expect(
+		violations.map(({ id, nodes }) => `${id}: ${nodes.map(({ target }) => target.join(' ')).join(', ')}`)
+	).toEqual([]);
+}
+
+/** Date and time boxes of an instant, read off the page's own "Now" so that the unit's zone is the page's to know. */
+async function fillHoursAgo(page: Page, ids: { on: string; time: string }, hoursAgo: number): Promise<void> {
+	const zone = await page.evaluate(
+		() => document.querySelector<HTMLInputElement>('[name=timeZone]')?.value ?? ''
+	);
+	const at = new Date(Date.now() - hoursAgo * HOUR);
+	const [on, time] = new Intl.DateTimeFormat('sv-SE', {
+		timeZone: zone,
+		year: 'numeric',
+		month: '2-digit',
+		day: '2-digit',
+		hour: '2-digit',
+		minute: '2-digit'
+	})
+		.format(at)
+		.split(' ');
+	await page.locator(`[id="${ids.on}"]`).fill(on ?? '');
+	await page.locator(`[id="${ids.time}"]`).fill(time ?? '');
+}
+
+async function fillNewborn(page: Page, recordNumber: string): Promise<void> {
+	await page.getByLabel('Family name').fill('Aldana');
+	await page.getByLabel('Given name').fill('Inés');
+	await page.getByLabel('Record number', { exact: true }).fill(recordNumber);
+	await page.getByLabel('Birth weight').fill('3,240');
+	await fillHoursAgo(page, { on: 'bornOn', time: 'bornTime' }, 40);
+	await page.getByLabel('completed weeks').fill('39');
+	await page.getByLabel('days beyond the weeks').fill('2');
+	await page.locator('[id="measurementMethod[0]"]').selectOption({ label: 'TSB' });
+	await page.locator('[id="measurementTotal[0]"]').fill('9,4');
+	await fillHoursAgo(page, { on: 'measurementOn[0]', time: 'measurementTime[0]' }, 3);
+	await page.getByRole('radio', { name: 'Breast' }).check();
+	await page.getByLabel('Name', { exact: true }).first().fill('Lucía Aldana');
+	await page.getByLabel('Telephone').first().fill('202 555 0177');
+	await page.getByLabel('Language').first().selectOption({ label: 'Español' });
+	await page.getByLabel('Agreed to text messages').first().check();
+	await fillHoursAgo(page, { on: 'dischargeOn', time: 'dischargeTime' }, -1);
+	await page.getByLabel('Clinic', { exact: true }).selectOption({ index: 1 });
+}
+
+const result = (page: Page) => page.getByRole('region', { name: 'Result' });
+
+test('the list says who goes home, what is missing and until when, and opens by keyboard', async ({
+	page
+}) => {
+	await asNurse(page);
+	await page.goto('/discharges', { waitUntil: 'networkidle' });
+	const leaving = page.getByRole('table', { name: 'Newborns who still go home from here' });
+	await expect(leaving.getByText('bilirubin value').first()).toBeVisible();
+	await expect(leaving.getByText('left').first()).toBeVisible();
+	await expect(leaving.getByRole('img').first()).toHaveAttribute('aria-label', /^Age \d+ h\./);
+	await expectAccessible(page);
+	await page.keyboard.press('j');
+	await page.keyboard.press('Enter');
+	await expect(page).toHaveURL(/\/discharges\/[a-z0-9]+$/);
+	await expectAccessible(page);
+});
+
+test('an empty form says everything that is missing beside its field, and nothing typed is lost', async ({
+	page
+}) => {
+	await asNurse(page);
+	await openNew(page);
+	await page.getByLabel('Given name').fill('Inés');
+	await page.locator('[id="measurementTotal[0]"]').fill('nine');
+	await page.getByRole('button', { name: 'Save for now' }).click();
+	const summary = page.getByRole('alert');
+	await expect(summary).toBeFocused();
+	await expect(summary).toContainText('Give the family name.');
+	await expect(page.getByLabel('Given name')).toHaveValue('Inés');
+	await expect(page.locator('[id="measurementTotal[0]"]')).toHaveValue('nine');
+	await expect(page.locator('[id="measurementTotal[0]"]')).toHaveAttribute('aria-invalid', 'true');
+	await summary.getByRole('link', { name: 'Give the family name.' }).click();
+	await expect(page.getByLabel('Family name')).toBeFocused();
+	await expectAccessible(page);
+});
+
+test('the result follows while typing, and a newborn goes home with a visit, a message and a sheet', async ({
+	page
+}) => {
+	await asNurse(page);
+	await openNew(page);
+	await expect(result(page)).toContainText('Still needed: date and time of birth and gestational age');
+	await fillNewborn(page, `E2E-${Date.now()}`);
+	await expect(result(page)).toContainText('Follow up in the window');
+	await expect(result(page)).toContainText('below the line');
+	await result(page).getByText(/^Why:/).click();
+	await expect(result(page)).toContainText('AAP 2022');
+
+	// A higher value asks for more, at once and without saving.
+	await page.locator('[id="measurementTotal[0]"]').fill('24');
+	await expect(result(page)).toContainText('over the line');
+	await expect(page.getByText('No visit yet')).toBeVisible();
+	await page.locator('[id="measurementTotal[0]"]').fill('9,4');
+
+	const places = page.getByRole('group', { name: /^Free places at/ });
+	await places.getByRole('radio').first().check();
+	await expectAccessible(page);
+	await page.getByRole('button', { name: 'Book, message the family and hand over' }).click();
+
+	await expect(page).toHaveURL(/\/sheet\?done=1$/);
+	const sheet = page.getByRole('article');
+	await expect(sheet).toContainText('Su cita');
+	await expect(sheet).toContainText('9.4 mg/dL');
+	await expect(sheet).toContainText(/\/v\/[\w-]{22}/);
+	await expect(sheet.getByRole('img')).toBeVisible();
+	await expectAccessible(page);
+
+	await page.goto('/discharges');
+	const gone = page.getByRole('table', { name: 'Newborns handed over to a clinic today' });
+	await expect(gone.getByRole('link', { name: 'Aldana, Inés' }).first()).toBeVisible();
+	await gone.getByRole('link', { name: 'Aldana, Inés' }).first().click();
+	await expect(page.getByText('The values belong to the clinic now')).toBeVisible();
+});
+
+test('a discharge is saved before everything is known, and a record number is taken only once', async ({
+	page
+}) => {
+	await asNurse(page);
+	await openNew(page);
+	const recordNumber = `E2E-S${Date.now()}`;
+	await fillNewborn(page, recordNumber);
+	await page.getByRole('button', { name: 'Save for now' }).click();
+	await expect(page.getByText('Not finished yet')).toBeVisible();
+	await expect(page.locator('[id="measurementTotal[0]"]')).toHaveValue('9.4');
+
+	await page.getByRole('link', { name: 'Enter a twin with the same family' }).click();
+	await expect(page.getByRole('heading', { level: 1, name: 'New discharge' })).toBeVisible();
+	await expect(page.getByLabel('Name', { exact: true }).first()).toHaveValue('Lucía Aldana');
+	await fillNewborn(page, recordNumber);
+	await page.getByRole('button', { name: 'Save for now' }).click();
+	await expect(page.getByText('Another newborn already has this record number.')).toBeVisible();
+	await expect(page.getByLabel('Family name')).toHaveValue('Aldana');
+});
+
+test('without scripts the form still saves and still says what is wrong', async ({ browser, baseURL }) => {
+	const context = await browser.newContext({ javaScriptEnabled: false, ...(baseURL ? { baseURL } : {}) });
+	const page = await context.newPage();
+	await asNurse(page);
+	await page.goto('/discharges/new');
+	await page.getByLabel('Family name').fill('Ruiz');
+	await page.getByRole('button', { name: 'Save for now' }).click();
+	await expect(page.getByRole('alert')).toContainText('Give the record number.');
+	await expect(page.getByLabel('Family name')).toHaveValue('Ruiz');
+	await context.close();
+});
