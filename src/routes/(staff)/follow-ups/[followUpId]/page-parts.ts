@@ -103,7 +103,9 @@ function goTo(id: string): void {
 	const part = document.getElementById(id);
 	part?.scrollIntoView({ block: 'start' });
 	part
-		?.querySelector<HTMLElement>('input:not([type="hidden"]), [tabindex="0"], summary, button, a')
+		?.querySelector<HTMLElement>(
+			'input:not([type="hidden"]), textarea, select, [tabindex="0"], summary, button, a'
+		)
 		?.focus({ preventScroll: true });
 }
 
