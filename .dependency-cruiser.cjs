@@ -40,7 +40,11 @@ module.exports = {
 			comment: 'A form schema is shared with the browser: it may not pull the server or the interface along.',
 			severity: 'error',
 			from: { path: '^src/lib/schemas/', pathNot: TESTS },
-			to: { path: '^src/', pathNot: ['^src/lib/schemas/', '^src/lib/domain/'] }
+			to: {
+				path: '^src/',
+				pathNot: ['^src/lib/(schemas|domain|format|i18n)/'],
+				dependencyTypesNot: ['type-only']
+			}
 		},
 		{
 			name: 'words-and-formats-know-domain-only',
@@ -137,7 +141,7 @@ module.exports = {
 				path: '^(src|jobs)/',
 				pathNot: [`${SERVER}auth/`, `${SERVER}random\\.ts$`, `${SERVER}repos/sessions\\.ts$`]
 			},
-			to: { path: '^node_modules/(lucia|oslo|@lucia-auth)/' }
+			to: { path: '^node_modules/(lucia|oslo|@lucia-auth)/', dependencyTypesNot: ['type-only'] }
 		},
 		{
 			name: 'fakes-stay-out-of-the-product',
