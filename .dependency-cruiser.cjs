@@ -93,8 +93,7 @@ module.exports = {
 				path: ['^src/', '^jobs/'],
 				pathNot: [
 					`${SERVER}(db|repos|services|outbox|audit|auth)/`,
-					'^jobs/(migrate|demo)',
-					'^jobs/demo/',
+					'^jobs/(migrate|demo|bench|stress)',
 					TESTS
 				]
 			},
