@@ -62,6 +62,11 @@ export class Store {
 		return this.#smsBySid.values();
 	}
 
+	/** Messages taken so far, of both kinds. */
+	get count(): number {
+		return this.#smsBySid.size + this.mails.length;
+	}
+
 	findSms(sid: string): FakeSms | undefined {
 		return this.#smsBySid.get(sid);
 	}

@@ -6,7 +6,7 @@ import { messages } from '../../src/lib/server/db/schema/messaging';
 import { insertPlainMessages, insertPlainSites, PLAIN_DOMAIN } from '../bench/plain-messages';
 import { type Fakes, startFakes } from '../fakes/fakes';
 import { parseFakesSettings } from '../fakes/settings';
-import { bundleWorker } from './bundle';
+import { bundleJobs } from './bundle';
 import { ended, environmentOf, STAND_INS } from './support';
 
 /**
@@ -17,12 +17,12 @@ import { ended, environmentOf, STAND_INS } from './support';
 const MAIL_SHARE = 0.2;
 const TELEPHONES = 400;
 const MAILBOXES = 100;
-const LONGEST_PAUSE_MILLISECONDS = 1200;
+const LONGEST_WAIT_MILLISECONDS = 5000;
 
 /** Short leases, so that what a killed worker held is taken up within the run. */
 const WORKER_TIMES = {
-	SEND_BATCH: '16',
-	SEND_CONCURRENCY: '8',
+	SEND_BATCH: '10',
+	SEND_CONCURRENCY: '5',
 	SEND_CALL_SECONDS: '4',
 	SEND_LEASE_SECONDS: '8',
 	SEND_SETTLE_SECONDS: '2',
@@ -112,13 +112,13 @@ async function main(): Promise<number> {
 	const env = {
 		...environmentOf({ http: Number(new URL(fakes.url).port), smtp: fakes.smtpPort }),
 		...WORKER_TIMES,
-		...pace(run),
 		DATABASE_URL: databaseUrl
 	};
-	const herd = new Herd(await bundleWorker(), env);
+	const [worker = ''] = await bundleJobs(['jobs/stress/plain-worker.ts']);
+	const herd = new Herd(worker, env);
 	for (let worker = 0; worker < run.workers; worker++) herd.add();
 	const began = Date.now();
-	await killWhileSending(herd, run, db);
+	await killWhileSending(herd, run, { db, fakes });
 	const left = await untilAllSent(db, run.deadline);
 	await herd.stop();
 	const verdict = judge(planned, fakes);
@@ -155,18 +155,22 @@ async function plan(db: Db, total: number): Promise<ReadonlySet<string>> {
 	return new Set([...sms, ...mail]);
 }
 
-/** Slow enough that the kills fall into the sending and not after it. */
-function pace({ messages: total, kills }: Run): Record<string, string> {
-	const seconds = (kills * LONGEST_PAUSE_MILLISECONDS) / 2000;
-	const perSecond = Math.max(4, Math.ceil(total / seconds));
-	const mail = Math.max(1, Math.ceil(perSecond * MAIL_SHARE));
-	return { SMS_PER_SECOND: String(Math.max(1, perSecond - mail)), MAIL_PER_SECOND: String(mail) };
-}
-
-/** Only workers with messages in their hands are killed: the others would tell nothing. */
-async function killWhileSending(herd: Herd, run: Run, db: Db): Promise<void> {
+/**
+ * The next kill comes when the fakes have taken a random number of further messages, so the kills are spread over the whole
+ * run on a fast machine and a slow one alike. Only workers with messages in their hands are killed: others tell nothing.
+ */
+async function killWhileSending(
+	herd: Herd,
+	run: Run,
+	{ db, fakes }: { db: Db; fakes: Fakes }
+): Promise<void> {
+	const apart = run.messages / run.kills;
 	while (herd.kills < run.kills && Date.now() < run.deadline) {
-		await pause(Math.random() * LONGEST_PAUSE_MILLISECONDS);
+		const taken = fakes.store.count;
+		if (taken >= run.messages) return;
+		const waitFor = Math.min(taken + Math.random() * apart * 1.6, run.messages - 1);
+		const patience = Date.now() + LONGEST_WAIT_MILLISECONDS;
+		while (fakes.store.count < waitFor && Date.now() < patience) await pause(2);
 		const before = herd.kills;
 		await herd.killOneOf(await busyWorkers(db));
 		if (herd.kills === before || herd.kills % 20 !== 0) continue;

@@ -6,25 +6,20 @@ const LOADER = new URL('../../node_modules/tsx/dist/loader.mjs', import.meta.url
 
 export interface ChildOptions {
 	readonly env: Readonly<Record<string, string>>;
-	/** Shows what it says; otherwise only its errors. */
-	readonly isLoud?: boolean;
+	readonly args?: readonly string[];
+	/** What becomes of its output; its errors are always shown. */
+	readonly output?: 'ignore' | 'inherit' | 'pipe';
 }
 
 /** Starts a file of jobs/ as a process of its own, so that a signal meets the worker itself. */
-export function startChild(file: string, { env, isLoud = false }: ChildOptions): ChildProcess {
-	return spawn(
-		process.execPath,
-		['--import', LOADER, fileURLToPath(new URL(`../${file}`, import.meta.url))],
-		{
-			cwd: ROOT,
-			env: {
-				...process.env,
-				TSX_TSCONFIG_PATH: fileURLToPath(new URL('../tsconfig.json', import.meta.url)),
-				...env
-			},
-			stdio: ['ignore', isLoud ? 'inherit' : 'ignore', 'inherit']
-		}
-	);
+export function startChild(file: string, { env, args = [], output = 'ignore' }: ChildOptions): ChildProcess {
+	const path = fileURLToPath(new URL(`../${file}`, import.meta.url));
+	const tsconfig = fileURLToPath(new URL('../tsconfig.json', import.meta.url));
+	return spawn(process.execPath, ['--import', LOADER, path, ...args], {
+		cwd: ROOT,
+		env: { ...process.env, TSX_TSCONFIG_PATH: tsconfig, ...env },
+		stdio: ['ignore', output, 'inherit']
+	});
 }
 
 /** Resolves with the exit code, or the signal that ended it. */
