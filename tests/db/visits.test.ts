@@ -248,3 +248,27 @@ describe('a discharge', () => {
 		);
 	});
 });
+
+describe('a later round', () => {
+	it('counts its window from the visit that took the value, not from the discharge days before', async () => {
+		const world = await openWorld(database);
+		const { ctx, east, clock } = world;
+		const followUpId = await world.enter();
+		must(await handOver(ctx, east.nurse.actor, { followUpId, place: null }));
+		clock.advance({ hours: 20 });
+		// 39 weeks, no risk factor, 60 hours: line 18.1 mg/dL; 6.5 below asks for a follow-up within 2 days (AAP 2022 Fig 7).
+		const measurement = {
+			method: 'serum' as const,
+			measuredAt: clock.now(),
+			total: 11.6,
+			direct: null,
+			unit: 'mg/dL' as const
+		};
+		const { window, difference } = must(
+			await recordMeasurement(ctx, east.pediatrician.actor, { followUpId, measurement })
+		);
+		expect(difference).toBeGreaterThanOrEqual(5.5);
+		expect(difference).toBeLessThan(7);
+		expect(window?.until).toEqual(new Date(clock.now().getTime() + 48 * HOUR));
+	});
+});

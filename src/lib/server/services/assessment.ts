@@ -1,7 +1,22 @@
 import { assessAtAnyAge } from '../../domain/guideline';
 import type { Assessment, AssessmentInput, Refusal, StandardId } from '../../domain/guideline/types';
 import type { Result } from '../../domain/result';
+import type { FollowUpRow } from '../repos/follow-ups';
 import type { NewbornRecord } from '../repos/newborns';
+
+/**
+ * From when a visit's window counts: the planned discharge, then the hand-over, and in later rounds the visit at which
+ * the latest value was taken, which is when the newborn was last in a clinician's hands.
+ */
+export function lastLeftAt(
+	followUp: Pick<FollowUpRow, 'plannedDischargeAt' | 'handedOverAt'>,
+	record: Pick<NewbornRecord, 'measurements'>
+): Date {
+	const { plannedDischargeAt, handedOverAt } = followUp;
+	if (!handedOverAt) return plannedDischargeAt;
+	const latest = record.measurements.at(-1)?.measuredAt;
+	return latest && latest > handedOverAt ? latest : handedOverAt;
+}
 
 /** What the guideline is asked about a newborn on record. */
 export function assessmentInputOf(

@@ -20,7 +20,7 @@ import { lockFollowUp, type LoadedFollowUp } from '../repos/follow-ups';
 import { findNewbornRecord, findRunningPhototherapy } from '../repos/newborns';
 import { advance, type Told } from './advance';
 import { settleAllAlerts } from './alerts';
-import { assessmentInputOf, assessRecord } from './assessment';
+import { assessmentInputOf, assessRecord, lastLeftAt } from './assessment';
 import { changeFollowUp } from './change';
 
 interface Judged {
@@ -31,7 +31,7 @@ interface Judged {
 async function judge(tx: Tx, ctx: Ctx, loaded: LoadedFollowUp): Promise<Result<Judged, AppError>> {
 	const record = await findNewbornRecord(tx, loaded.row.newbornId);
 	if (!record) return err(notFound);
-	const dischargeAt = loaded.row.handedOverAt ?? loaded.row.plannedDischargeAt;
+	const dischargeAt = lastLeftAt(loaded.row, record);
 	const asked = { standard: loaded.row.standard, dischargeAt, now: ctx.clock.now() };
 	const assessed = assessRecord(record, asked);
 	if (!assessed.ok) return err(invalid(assessed.error[0]?.message ?? 'The values cannot be assessed.'));

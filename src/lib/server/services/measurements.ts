@@ -12,13 +12,13 @@ import type { LoadedFollowUp } from '../repos/follow-ups';
 import { findNewbornRecord } from '../repos/newborns';
 import { advance } from './advance';
 import { raiseAlert } from './alerts';
-import { assessRecord } from './assessment';
+import { assessRecord, lastLeftAt } from './assessment';
 import { changeFollowUp } from './change';
 
 async function assessLoaded(tx: Tx, ctx: Ctx, loaded: LoadedFollowUp): Promise<Result<Assessment, AppError>> {
 	const record = await findNewbornRecord(tx, loaded.row.newbornId);
 	if (!record) return err(notFound);
-	const dischargeAt = loaded.row.handedOverAt ?? loaded.row.plannedDischargeAt;
+	const dischargeAt = lastLeftAt(loaded.row, record);
 	const assessed = assessRecord(record, { standard: loaded.row.standard, dischargeAt, now: ctx.clock.now() });
 	const refusal = assessed.ok ? undefined : assessed.error[0];
 	return assessed.ok

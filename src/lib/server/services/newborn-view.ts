@@ -21,7 +21,7 @@ import {
 	type FollowUpPageRow,
 	type Happenings
 } from '../repos/newborn-view';
-import { assessmentInputOf, assessRecord } from './assessment';
+import { assessmentInputOf, assessRecord, lastLeftAt } from './assessment';
 
 /** What this person may do on the page; every part that is not allowed is not sent to the browser at all. */
 export interface MayDo {
@@ -196,7 +196,7 @@ function valuesView(
 ): ValuesView {
 	const asked = {
 		standard: followUp.standard,
-		dischargeAt: followUp.handedOverAt ?? followUp.plannedDischargeAt,
+		dischargeAt: lastLeftAt(followUp, record),
 		now
 	};
 	const input = assessmentInputOf(record, asked);

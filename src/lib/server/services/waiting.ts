@@ -12,7 +12,7 @@ import {
 	type OwedAlertRow,
 	type OwedStepRow
 } from '../repos/waiting';
-import { assessmentInputOf, assessRecord } from './assessment';
+import { assessmentInputOf, assessRecord, lastLeftAt } from './assessment';
 
 type Card = Pick<OwedStepRow, 'followUp' | 'newborn' | 'clinic'>;
 
@@ -69,7 +69,7 @@ function cardOf({ followUp, newborn, clinic }: Card, marks: Marks, now: Date) {
 	};
 	const asked = {
 		standard: followUp.standard,
-		dischargeAt: followUp.handedOverAt ?? followUp.plannedDischargeAt,
+		dischargeAt: lastLeftAt(followUp, record),
 		now
 	};
 	const assessed = assessRecord(record, asked);
