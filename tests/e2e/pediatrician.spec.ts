@@ -10,6 +10,9 @@ async function signIn(page: Page, email: string): Promise<void> {
 	await page.getByLabel('Password').fill(PASSWORD);
 	await page.getByRole('button', { name: 'Sign in' }).click();
 	await page.waitForURL((url) => !url.pathname.startsWith('/sign-in'));
+	// The first page must have arrived, or the next address would cut off its loading.
+	await expect(page.getByRole('heading', { level: 1 })).toBeVisible();
+	await page.waitForLoadState('load');
 }
 
 const asPediatrician = (page: Page) => signIn(page, 'pediatrician@example.org');
