@@ -15,6 +15,7 @@ interface InHand {
 }
 
 const AFTER_TROUBLE_MILLISECONDS = 1000;
+const CONTENDED_MILLISECONDS = 20;
 
 /**
  * One worker's way of sending over one channel: takes due messages in batches, keeps a fixed number of calls going, and
@@ -55,9 +56,12 @@ export class Lane {
 	async drain(): Promise<number> {
 		return this.#whileRenewing(async () => {
 			let looked = 0;
-			for (let count = 1; count > 0; looked += count) {
-				count = await this.#take();
+			for (let isDone = false; !isDone;) {
+				const { count, isContended } = await this.#take();
+				looked += count;
 				await this.#untilIdle();
+				isDone = count === 0 && !isContended;
+				if (isContended) await pause(CONTENDED_MILLISECONDS);
 			}
 			return looked;
 		});
@@ -91,7 +95,7 @@ export class Lane {
 	/** The database may be away: the loop outlives it. */
 	async #takeOrPause(): Promise<number> {
 		try {
-			return await this.#take();
+			return (await this.#take()).count;
 		} catch (error) {
 			this.#outbox.ctx.log.error({ err: error, channel: this.#channel }, 'no messages could be taken');
 			await pause(AFTER_TROUBLE_MILLISECONDS);
@@ -99,17 +103,18 @@ export class Lane {
 		}
 	}
 
-	async #take(): Promise<number> {
+	async #take(): Promise<{ count: number; isContended: boolean }> {
 		const { settings, workerId, ctx } = this.#outbox;
 		const { pausedUntil } = this.#recorder;
-		if (pausedUntil !== null && pausedUntil > ctx.clock.now()) return 0;
+		if (pausedUntil !== null && pausedUntil > ctx.clock.now()) return { count: 0, isContended: false };
 		this.#recorder.pausedUntil = null;
 		const lease = new Lease(`${workerId}/${this.#channel}${++this.#claims}`, settings.leaseSeconds);
-		const { looked, held } = await takeDue(this.#outbox, this.#channel, settings.batch, lease.token);
+		const taken = await takeDue(this.#outbox, this.#channel, settings.batch, lease.token);
+		const { looked: count, held, isContended } = taken;
 		if (held.length > 0) this.#leases.set(lease.token, lease);
 		this.#ready.push(...held.map((one) => ({ held: one, lease })));
 		this.#call();
-		return looked;
+		return { count, isContended };
 	}
 
 	#call(): void {

@@ -16,9 +16,11 @@ export interface Taken {
 	/** Messages that were due and dealt with: held for a call, withdrawn, moved on, or too late. */
 	readonly looked: number;
 	readonly held: readonly Held[];
+	/** Something is due but locked for the moment: by another worker's claim, or as the neighbour of one in the index. */
+	readonly isContended: boolean;
 }
 
-const NOTHING: Taken = { looked: 0, held: [] };
+const NOTHING: Taken = { looked: 0, held: [], isContended: false };
 
 /**
  * Takes up to `limit` due messages of a channel: locks them, checks each against its follow-up as it is now, renders it, and
@@ -40,10 +42,10 @@ export async function takeDue(
 	return withTx(ctx.db, async (tx) => {
 		const fraction = ctx.random.fraction();
 		const rows = await lockDue(tx, groups, { channel, limit: granted, now, fraction });
-		if (rows.length === 0) return NOTHING;
+		if (rows.length === 0) return { ...NOTHING, isContended: true };
 		const held = await checkAndRender(tx, outbox, { rows, now, token });
 		await markBegun(tx, outbox, held);
-		return { looked: rows.length, held };
+		return { looked: rows.length, held, isContended: false };
 	});
 }
 
