@@ -3,10 +3,10 @@ import type { StaffActor } from '../../src/lib/domain/access/roles';
 import { workers } from '../../src/lib/server/db/schema/messaging';
 import { decideAccess, ROUTE_ACCESS, type Need } from '../../src/lib/server/auth/route-access';
 import { sessionCookieName, startSession } from '../../src/lib/server/auth/session';
-import { startApp, type App } from '../support/app';
+import { startApp } from '../support/app';
 import { testContext } from '../support/context';
 import { openTestDatabase } from '../support/database';
-import { makeHospital, type Hospital } from '../support/factories/hospital';
+import { makeHospital } from '../support/factories/hospital';
 import { addressOf, findRoutes } from '../support/routes';
 import { visitor, type Visitor } from '../support/visitor';
 
@@ -15,8 +15,8 @@ const WHO = ['nobody', 'nurse', 'desk', 'pediatrician', 'admin'] as const;
 type Who = (typeof WHO)[number];
 
 const database = await openTestDatabase();
-let app: App;
-let hospital: Hospital;
+const app = await startApp(database.url);
+const hospital = await makeHospital(database.db);
 const visitors = new Map<Who, Visitor>();
 
 const params = (side: 'east' | 'west'): Record<string, string> => ({
@@ -42,8 +42,6 @@ const ask = (who: Who): Visitor => {
 };
 
 beforeAll(async () => {
-	app = await startApp(database.url);
-	hospital = await makeHospital(database.db);
 	const ctx = testContext(database);
 	// A worker that is heard from all through the test, so that the health answer is not a failure.
 	const heardAt = new Date(Date.now() + 3_600_000);
@@ -54,7 +52,7 @@ beforeAll(async () => {
 		if (actor) jar.set(sessionCookieName(ctx), (await startSession(ctx, actor.staffId, true)).sessionId);
 		visitors.set(who, visitor(app, jar));
 	}
-}, 400_000);
+});
 
 /** As through a proxy, so that being on the same machine opens nothing. */
 const FROM_OUTSIDE = { 'x-forwarded-for': '198.51.100.7' };

@@ -1,19 +1,15 @@
-import { beforeAll, beforeEach, describe, expect, test } from 'vitest';
+import { beforeEach, describe, expect, test } from 'vitest';
 import { invitations } from '../../src/lib/server/db/schema/staff';
-import { startApp, type App } from '../support/app';
+import { startApp } from '../support/app';
 import { openTestDatabase } from '../support/database';
 import { makeHospital, type Hospital } from '../support/factories/hospital';
 import { visitor, type Visitor } from '../support/visitor';
 
 const database = await openTestDatabase();
 const { db } = database;
-let app: App;
+const app = await startApp(database.url);
 let hospital: Hospital;
 let admin: Visitor;
-
-beforeAll(async () => {
-	app = await startApp(database.url);
-}, 400_000);
 
 beforeEach(async () => {
 	await database.clean();

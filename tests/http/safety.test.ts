@@ -1,25 +1,18 @@
-import { beforeAll, describe, expect, test } from 'vitest';
-import { startApp, type App } from '../support/app';
+import { describe, expect, test } from 'vitest';
+import { startApp } from '../support/app';
 import { openTestDatabase } from '../support/database';
-import { makeHospital, type Hospital } from '../support/factories/hospital';
+import { makeHospital } from '../support/factories/hospital';
 import { visitor } from '../support/visitor';
 
 const database = await openTestDatabase();
-let app: App;
+const app = await startApp(database.url);
 /** The same product as it believes to be behind https. */
-let secure: App;
+const secure = await startApp(database.url, { ORIGIN: 'https://fadewell.example.org' });
+const gone = new URL(database.url);
+gone.pathname = '/there_is_no_such_database';
 /** A server whose database is gone. */
-let broken: App;
-let hospital: Hospital;
-
-beforeAll(async () => {
-	app = await startApp(database.url);
-	secure = await startApp(database.url, { ORIGIN: 'https://fadewell.example.org' });
-	const gone = new URL(database.url);
-	gone.pathname = '/there_is_no_such_database';
-	broken = await startApp(gone.href);
-	hospital = await makeHospital(database.db);
-}, 400_000);
+const broken = await startApp(gone.href);
+const hospital = await makeHospital(database.db);
 
 describe('headers', () => {
 	test.each(['/sign-in', '/nowhere', '/people', '/health/live', '/api/v1/places', '/v/no-such-token'])(

@@ -1,24 +1,19 @@
 import { eq } from 'drizzle-orm';
-import { beforeAll, beforeEach, describe, expect, test } from 'vitest';
+import { beforeEach, describe, expect, test } from 'vitest';
 import { hashToken } from '../../src/lib/server/repos/sessions';
 import { accessRecords, sessions, staff } from '../../src/lib/server/db/schema/staff';
 import { rateLimits } from '../../src/lib/server/db/schema/rate-limit';
-import { startApp, type App } from '../support/app';
+import { startApp } from '../support/app';
 import { openTestDatabase } from '../support/database';
 import { makeHospital, type Hospital } from '../support/factories/hospital';
 import { visitor } from '../support/visitor';
 
 const database = await openTestDatabase();
 const { db } = database;
-let app: App;
+const app = await startApp(database.url);
 /** A second web process over the same database. */
-let twin: App;
+const twin = await startApp(database.url, { ORIGIN: app.origin });
 let hospital: Hospital;
-
-beforeAll(async () => {
-	app = await startApp(database.url);
-	twin = await startApp(database.url, { ORIGIN: app.origin });
-}, 400_000);
 
 beforeEach(async () => {
 	await database.clean();

@@ -28,7 +28,7 @@ async function builtServer(): Promise<string> {
 
 /**
  * Starts the built web server over a test's database, on a free port, and waits until it answers; it stops with the
- * test file. Call it in `beforeAll` with a time-out that has room for a build.
+ * test file. Call it at the top of the file, where hooks can still be added: `const app = await startApp(database.url);`
  */
 export async function startApp(databaseUrl: string, extra: Record<string, string> = {}): Promise<App> {
 	const build = await builtServer();
