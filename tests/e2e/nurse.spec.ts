@@ -61,7 +61,7 @@ async function fillNewborn(page: Page, recordNumber: string): Promise<void> {
 	await fillHoursAgo(page, { on: 'measurementOn[0]', time: 'measurementTime[0]' }, 3);
 	await page.getByRole('radio', { name: 'Breast' }).check();
 	await page.getByLabel('Name', { exact: true }).first().fill('Lucía Aldana');
-	await page.getByLabel('Telephone').first().fill('202 555 0177');
+	await page.getByLabel('Telephone', { exact: true }).first().fill('202 555 0177');
 	await page.getByLabel('Language').first().selectOption({ label: 'Español' });
 	await page.getByLabel('Agreed to text messages').first().check();
 	await fillHoursAgo(page, { on: 'dischargeOn', time: 'dischargeTime' }, -1);
@@ -124,7 +124,10 @@ test('the result follows while typing, and a newborn goes home with a visit, a m
 	await page.locator('[id="measurementTotal[0]"]').fill('9,4');
 
 	const places = page.getByRole('group', { name: /^Free places at/ });
-	await places.getByRole('radio').first().check();
+	await places
+		.getByRole('radio', { name: /^\d\d:\d\d/ })
+		.first()
+		.check();
 	await expectAccessible(page);
 	await page.getByRole('button', { name: 'Book, message the family and hand over' }).click();
 

@@ -60,6 +60,8 @@ describe('finishing a discharge', () => {
 	});
 
 	it('says what the button will do', () => {
+		expect(finishLabel(typed(), settingOf(typed()))).toBe('Finish the discharge');
+		expect(finishSteps(typed(), settingOf(typed()))[0]).toMatch(/^The visit: choose a place/);
 		const form = typed({ place: inside });
 		expect(finishLabel(form, settingOf(form))).toBe('Book, message the family and hand over');
 		expect(finishSteps(form, settingOf(form))[0]).toBe(

@@ -95,6 +95,7 @@ export function finishLabel(form: DischargeForm, setting: FinishSetting): string
 	if (setting.live.state !== 'assessed') return 'Finish the discharge';
 	if (!mayGoHome(setting.live)) return 'Hand over against the standard';
 	if (setting.hasVisit) return 'Message the family and hand over';
+	if (form.place === '') return 'Finish the discharge';
 	return readPlace(form.place)
 		? 'Book, message the family and hand over'
 		: 'Hand over, the desk makes the visit';
