@@ -62,16 +62,16 @@ async function failedBeforeCall(tx: Tx, outbox: Outbox, row: MessageRow, reason:
 export interface Failure {
 	readonly reason: string;
 	readonly retryAfterSeconds?: number | undefined;
-	/** `pace`: the provider asked us to slow down, which is no fault of the message and does not count. */
-	readonly blame?: 'message' | 'provider' | 'pace';
+	/** False where the message and its provider are not to blame: a slower pace was asked for, or our worker died. */
+	readonly isCounted?: boolean;
 }
 
 /** A call that certainly sent nothing: tried again after a pause, or given up. */
 async function failed(tx: Tx, outbox: Outbox, known: Known, failure: Failure): Promise<void> {
 	const { ctx } = outbox;
 	const { row } = known;
-	const { retryAfterSeconds, blame } = failure;
-	const attempts = row.attempts + (blame === 'pace' ? 0 : 1);
+	const { retryAfterSeconds, isCounted = true } = failure;
+	const attempts = row.attempts + (isCounted ? 1 : 0);
 	const { claims, expiresAt } = row;
 	const drawn = { fraction: ctx.random.fraction(), now: ctx.clock.now() };
 	const after = afterFailure({ ...drawn, attempts, claims, retryAfterSeconds, expiresAt });

@@ -4,10 +4,11 @@ import type { Reader, Tx } from '../db/client';
 import { messages } from '../db/schema/messaging';
 import { withTx } from '../db/tx';
 import type { Lookup } from '../providers/call';
-import { conclude } from './conclude';
+import { conclude, type Failure } from './conclude';
 import { applyDelivery } from './delivery';
 import { databaseIn, databaseNow } from './lease';
 import type { MessageRow, Outbox } from './port';
+import { WORKER_STOPPED } from './rescue';
 
 const AT_ONCE = 40;
 const SIDE_BY_SIDE = 8;
@@ -81,12 +82,16 @@ async function settle(outbox: Outbox, row: MessageRow, token: string, lookup: Lo
 	await withTx(ctx.db, async (tx) => {
 		if (lookup.kind === 'found') await recordFound(tx, outbox, row, lookup);
 		else if (lookup.kind === 'unavailable') await askLater(tx, outbox, row);
-		else if (lookup.kind === 'absent')
-			await conclude.failed(tx, outbox, known, { reason: 'never arrived at the provider' });
+		else if (lookup.kind === 'absent') await conclude.failed(tx, outbox, known, absence(row));
 		// Mail hosts without a list: sent again under the same Message-ID, by which the receiving side knows a repeat.
 		else await conclude.failed(tx, outbox, known, { reason: 'answer lost, and no list to look in' });
 	});
 }
+
+const absence = ({ lastError }: MessageRow): Failure => ({
+	reason: 'never arrived at the provider',
+	isCounted: lastError !== WORKER_STOPPED
+});
 
 async function recordFound(
 	tx: Tx,

@@ -65,7 +65,9 @@ async function recordUnknown(tx: Tx, { ctx, settings }: Outbox, called: readonly
 async function recordFailure(tx: Tx, outbox: Outbox, { held, outcome }: Called): Promise<void> {
 	const known = { row: held.row, holds: heldBy(held.token) };
 	if (outcome.kind === 'refused') await conclude.dead(tx, outbox, known, { reason: outcome.reason });
-	if (outcome.kind === 'not-taken') await conclude.failed(tx, outbox, known, outcome);
+	if (outcome.kind === 'not-taken') {
+		await conclude.failed(tx, outbox, known, { ...outcome, isCounted: outcome.blame !== 'pace' });
+	}
 }
 
 const heldBy = (token: string): SQL | undefined =>

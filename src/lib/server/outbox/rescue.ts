@@ -6,6 +6,8 @@ import { databaseNow } from './lease';
 import type { Outbox } from './port';
 
 const AT_ONCE = 500;
+/** Stands in `last_error` of what was freed: no fault of the message, so it does not count as an attempt. */
+export const WORKER_STOPPED = 'its worker stopped';
 
 /**
  * Frees messages whose worker died or lost touch: their calls may have been made, so they become `unknown` and the provider
@@ -25,7 +27,7 @@ export async function rescueAbandoned({ ctx, settings }: Outbox): Promise<number
 				runAt: askAt,
 				lockedBy: null,
 				lockedUntil: null,
-				lastError: 'its worker stopped',
+				lastError: WORKER_STOPPED,
 				updatedAt: now
 			})
 			.where(inArray(messages.id, ids));
