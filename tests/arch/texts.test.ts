@@ -129,7 +129,7 @@ describe('Arabic', () => {
 			const [first] = whole.match(/\p{L}/u) ?? [];
 			expect(first).toMatch(/\p{Script=Arabic}/u);
 			// Groups of a number keep their order only behind a left-to-right mark.
-			for (const [index] of [...whole.matchAll(/\(512\)/g)].map((match) => [match.index])) {
+			for (const { index } of whole.matchAll(/\(512\)/g)) {
 				expect(whole[index - 1]).toBe('\u200e');
 			}
 		}

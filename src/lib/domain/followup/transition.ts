@@ -64,7 +64,8 @@ export const LEGAL_FROM: Readonly<Record<Exclude<TransitionKind, 'entered'>, rea
 	'value-recorded': AT_HOME,
 	accepted: AT_HOME,
 	overridden: AT_HOME,
-	'treatment-ended': ['in-treatment'],
+	// A value taken under treatment waits for a decision, and the end of treatment may be that decision.
+	'treatment-ended': ['in-treatment', 'result-waiting'],
 	closed: OPEN,
 	reopened: ['closed'],
 	merged: OPEN,

@@ -7,6 +7,7 @@ import { attempts } from '../db/schema/follow-up';
 import { carers } from '../db/schema/newborn';
 import { invalid, type AppError } from '../errors';
 import { changeFollowUp } from './change';
+import { replanMessages } from './message-plan';
 
 export interface NewAttempt {
 	readonly followUpId: string;
@@ -40,6 +41,8 @@ export function logAttempt(
 			staffId: actor.staffId,
 			at: ctx.clock.now()
 		});
+		// A family that was reached needs no further rung of the ladder.
+		await replanMessages(tx, ctx, followUpId);
 		return ok(null);
 	});
 }

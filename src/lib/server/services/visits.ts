@@ -14,6 +14,7 @@ import { releaseVisit } from '../repos/visits';
 import { advance } from './advance';
 import { raiseAlert, settleAlertsOf } from './alerts';
 import { changeFollowUp, mayOn } from './change';
+import { replanMessages } from './message-plan';
 
 export interface WantedPlace {
 	readonly startsAt: Date;
@@ -223,6 +224,7 @@ export function askForAnotherTime(
 			detail: wish ? `Asks for another time: ${wish}`.slice(0, 500) : 'Asks for another time.',
 			dedupeKey: `other-time ${visit.id} ${now.getTime()}`
 		});
+		await replanMessages(tx, ctx, followUpId);
 		return ok(null);
 	});
 }
