@@ -69,7 +69,7 @@ test('an invited person chooses a password and has the role; disabled, the perso
 	await open(page, '/people');
 	const row = page.getByRole('row', { name: /Robin O’Test/ });
 	await expect(row).toContainText('Active');
-	await row.getByText('Change').click();
+	await row.locator('summary').click();
 	await row.getByRole('button', { name: 'Disable account' }).click();
 	await expect(row).toContainText('Disabled');
 	await other.goto('/queue');
