@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { VISIT_KINDS } from '$lib/domain/followup/visit';
+import { formatDay } from '$lib/format/time';
 
 const answer = z.object({
 	places: z.array(
@@ -30,4 +31,14 @@ export async function fetchFreePlaces(
 	});
 	if (!response.ok) throw new Error('The free places could not be loaded.');
 	return answer.parse(await response.json()).places.filter(({ free }) => free > 0);
+}
+
+/** The places under their local day, in the order given. */
+export function placesByDay(places: readonly FreePlace[], timeZone: string): [string, FreePlace[]][] {
+	const days = new Map<string, FreePlace[]>();
+	for (const place of places) {
+		const day = formatDay(place.startsAt, { timeZone });
+		days.set(day, [...(days.get(day) ?? []), place]);
+	}
+	return [...days];
 }
