@@ -108,6 +108,7 @@ test('an empty form says everything that is missing beside its field, and nothin
 test('the result follows while typing, and a newborn goes home with a visit, a message and a sheet', async ({
 	page
 }) => {
+	test.slow();
 	await asNurse(page);
 	await openNew(page);
 	await expect(result(page)).toContainText('Still needed: date and time of birth and gestational age');
