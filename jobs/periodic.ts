@@ -31,7 +31,7 @@ export function startPeriodic(ctx: Ctx, workerId: string, ticks: readonly TimedT
 	);
 	for (const tick of ticks) void attempt(tick);
 	return async () => {
-		await Promise.all(tasks.map((task) => task.destroy()));
+		for (const task of tasks) await task.destroy();
 		await Promise.all(running);
 	};
 }

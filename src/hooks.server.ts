@@ -45,11 +45,19 @@ const identify: Handle = ({ event, resolve }) => {
 };
 
 const setHeaders: Handle = async ({ event, resolve }) => {
-	const response = await resolve(event).catch((error: unknown) => answerFailure(event, error));
+	const response = await answered(event, resolve);
 	protectHeaders(response.headers, event.locals.ctx.config.origin.startsWith('https:'));
 	response.headers.set('x-request-id', event.locals.requestId);
 	return response;
 };
+
+async function answered(event: RequestEvent, resolve: Parameters<Handle>[0]['resolve']): Promise<Response> {
+	try {
+		return await resolve(event);
+	} catch (error) {
+		return answerFailure(event, error);
+	}
+}
 
 /** For what breaks before a page is reached, such as a session that cannot be looked up: fail closed, with a number. */
 function answerFailure(event: RequestEvent, error: unknown): Response {

@@ -109,7 +109,7 @@ describe('a follow-up', () => {
 					expectSound(state);
 				}
 			}),
-			{ numRuns: 2_000 }
+			{ numRuns: 2_000, seed: 20_260_302 }
 		);
 		expect([...reached].sort()).toEqual([...STAGES].sort());
 	});

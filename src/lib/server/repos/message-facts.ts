@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray, max } from 'drizzle-orm';
+import { and, asc, eq, max } from 'drizzle-orm';
 import type { Reader, Tx } from '../db/client';
 import { attempts, checkIns, followUps, visits } from '../db/schema/follow-up';
 import { carers, newborns } from '../db/schema/newborn';
@@ -51,4 +51,3 @@ export async function loadPlanRows(db: Reader, followUp: FollowUpRow) {
 		? { ...head, carers: carerRows, visits: visitRows, checkIns: checkInRows, lastReachedAt }
 		: null;
 }
-

@@ -1,11 +1,9 @@
 import { chooseSchema, dayQuerySchema, placeOfWord } from '$lib/schemas/desk';
 import { recordAccess } from '$lib/server/audit/record';
 import { requireActor } from '$lib/server/auth/guard';
-import { invalid } from '$lib/server/errors';
 import { refuseForm } from '$lib/server/http/form';
-import { findFollowUp } from '$lib/server/repos/follow-ups';
 import { getCalendar } from '$lib/server/services/desk-calendar';
-import { bookVisit, moveVisit } from '$lib/server/services/visits';
+import { takePlace } from '$lib/server/services/take-place';
 import { error, fail, redirect } from '@sveltejs/kit';
 import { superValidate } from 'sveltekit-superforms';
 import { zod4 } from 'sveltekit-superforms/adapters';
@@ -36,28 +34,25 @@ export const actions: Actions = {
 		if (!followUpId) error(404, 'Choose a newborn first.');
 		const place = placeOfWord(form.data.place);
 		if (!form.valid || !place) return fail(422, { form });
-		const loaded = await findFollowUp(ctx.db, followUpId);
 		const { why, outsideWindowWhy } = form.data;
-		const wanted = { ...place, followUpId, outsideWindowWhy: outsideWindowWhy || undefined };
-		if (loaded?.openVisit && why === '') {
-			return refuseForm(form, invalid('Say why the visit moves, in a few words.', 'why'));
-		}
-		const done = loaded?.openVisit
-			? await moveVisit(ctx, actor, { ...wanted, why })
-			: await bookVisit(ctx, actor, wanted);
+		const done = await takePlace(ctx, actor, {
+			...place,
+			followUpId,
+			why,
+			outsideWindowWhy: outsideWindowWhy || undefined
+		});
 		if (!done.ok) {
 			const { error: refusal } = done;
 			const isPlace = refusal.code === 'invalid' && refusal.field === 'startsAt';
 			return refuseForm(form, isPlace ? { ...refusal, field: 'place' } : refusal);
 		}
-		const word = loaded?.openVisit ? 'moved' : 'booked';
 		await recordAccess(ctx.db, ctx, {
 			organisationId: actor.organisationId,
 			staffId: actor.staffId,
 			action: 'follow-up.changed',
 			followUpId,
-			detail: word
+			detail: done.value
 		});
-		redirect(303, `/queue/${followUpId}?done=${word}`);
+		redirect(303, `/queue/${followUpId}?done=${done.value}`);
 	}
 };

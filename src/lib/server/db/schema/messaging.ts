@@ -1,14 +1,4 @@
-import {
-	boolean,
-	datetime,
-	index,
-	int,
-	json,
-	mysqlTable,
-	text,
-	uniqueIndex,
-	varchar
-} from 'drizzle-orm/mysql-core';
+import { boolean, index, int, json, mysqlTable, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core';
 import type { Channel, MessageKind, MessageState } from '../../../domain/messaging/kinds';
 import type { Language } from '../../../domain/messaging/language';
 import { asciiWord, instant, recordId } from '../columns';
