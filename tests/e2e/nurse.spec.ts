@@ -73,6 +73,7 @@ const result = (page: Page) => page.getByRole('region', { name: 'Result' });
 test('the list says who goes home, what is missing and until when, and opens by keyboard', async ({
 	page
 }) => {
+	test.slow();
 	await asNurse(page);
 	await page.goto('/discharges', { waitUntil: 'networkidle' });
 	const leaving = page.getByRole('table', { name: 'Newborns who still go home from here' });
