@@ -1,5 +1,6 @@
 /** The outcome of something that may be refused for an expected reason; a thrown error is a bug or a broken machine. */
-export type Result<T, E> = { readonly ok: true; readonly value: T } | { readonly ok: false; readonly error: E };
+export type Result<T, E> =
+	{ readonly ok: true; readonly value: T } | { readonly ok: false; readonly error: E };
 
 export const ok = <T>(value: T): Result<T, never> => ({ ok: true, value });
 

@@ -81,36 +81,32 @@ async function saveMeasurements(tx: Tx, ctx: Ctx, { newbornId, facts, staffId }:
 	const added = facts.measurements.filter((m) => !rows.some((row) => isSame(row, m)));
 	if (added.length === 0) return;
 	const recordedAt = ctx.clock.now();
-	await tx
-		.insert(measurements)
-		.values(
-			added.map((m) => ({
-				...m,
-				id: ctx.random.id(),
-				newbornId,
-				status: 'final' as const,
-				recordedAt,
-				recordedBy: staffId
-			}))
-		);
+	await tx.insert(measurements).values(
+		added.map((m) => ({
+			...m,
+			id: ctx.random.id(),
+			newbornId,
+			status: 'final' as const,
+			recordedAt,
+			recordedBy: staffId
+		}))
+	);
 }
 
 async function saveWeights(tx: Tx, ctx: Ctx, { newbornId, facts, staffId }: Saving): Promise<void> {
 	await tx.delete(weights).where(eq(weights.newbornId, newbornId));
 	if (facts.weights.length === 0) return;
 	const recordedAt = ctx.clock.now();
-	await tx
-		.insert(weights)
-		.values(
-			facts.weights.map(({ weighedAt, grams }) => ({
-				id: ctx.random.id(),
-				newbornId,
-				weighedAt,
-				grams,
-				recordedAt,
-				recordedBy: staffId
-			}))
-		);
+	await tx.insert(weights).values(
+		facts.weights.map(({ weighedAt, grams }) => ({
+			id: ctx.random.id(),
+			newbornId,
+			weighedAt,
+			grams,
+			recordedAt,
+			recordedBy: staffId
+		}))
+	);
 }
 
 async function savePhototherapy(tx: Tx, ctx: Ctx, { newbornId, facts, staffId }: Saving): Promise<void> {
