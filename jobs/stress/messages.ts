@@ -11,7 +11,7 @@ import { ended, environmentOf, STAND_INS } from './support';
 
 /**
  * Kills workers at random moments while they send, and counts at the fakes: nothing may be lost, nothing repeated.
- * `npm run stress:messages -- [--messages 10000] [--kills 200] [--workers 4] [--minutes 12]`
+ * `npm run stress:messages -- [--messages 10000] [--kills 200] [--workers 4] [--minutes 30]`
  */
 
 const MAIL_SHARE = 0.2;
@@ -43,7 +43,7 @@ function readOptions(): Run {
 			messages: number('10000'),
 			kills: number('200'),
 			workers: number('4'),
-			minutes: number('12')
+			minutes: number('30')
 		}
 	});
 	return {

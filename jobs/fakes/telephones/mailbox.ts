@@ -10,7 +10,7 @@ export function mailboxCard(address: string, mails: readonly FakeMail[]): string
 	const left = mails.length - shown.length;
 	const earlier = left > 0 ? `<p class="earlier">${left} earlier</p>` : '';
 	return `<article class="mailbox" aria-label="Mailbox ${escape(address)}">
-<header><h2 dir="ltr">${escape(address)}</h2></header>
+<header><h3 dir="ltr">${escape(address)}</h3></header>
 ${shown.map(letter).join('')}${earlier}</article>`;
 }
 

@@ -30,7 +30,7 @@ const MAIL_POLICY =
 const require = createRequire(import.meta.url);
 const FILES: Readonly<Record<string, { readonly path: string; readonly type: string }>> = {
 	'/telephones.css': { path: here('telephones.css'), type: 'text/css; charset=utf-8' },
-	'/telephones.js': { path: here('telephones.js'), type: 'text/javascript; charset=utf-8' },
+	'/telephones.js': { path: here('telephones.mjs'), type: 'text/javascript; charset=utf-8' },
 	'/plain.woff2': {
 		path: require.resolve('@fontsource-variable/atkinson-hyperlegible-next/files/atkinson-hyperlegible-next-latin-wght-normal.woff2'),
 		type: 'font/woff2'

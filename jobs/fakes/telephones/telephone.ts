@@ -21,7 +21,7 @@ export function telephoneCard(number: string, thread: readonly FakeSms[]): strin
 	const earlier = left > 0 ? `<li class="earlier">${left} earlier</li>` : '';
 	const id = `answer-${number.replace(/\D/g, '')}`;
 	return `<article class="telephone" id="t${escape(number.replace(/\D/g, ''))}" aria-label="Telephone ${escape(number)}">
-<header><h2 dir="ltr">${escape(readableNumber(number))}</h2></header>
+<header><h3 dir="ltr">${escape(readableNumber(number))}</h3></header>
 <ol class="thread" tabindex="0" aria-label="Messages" data-key="thread-${escape(number)}">${earlier}${shown.map(bubble).join('')}</ol>
 <form method="post" action="/answer" class="answer">
 <input type="hidden" name="from" value="${escape(number)}">

@@ -72,4 +72,6 @@ document.addEventListener('submit', (event) => {
 
 localTimes(document);
 toNewest(document);
-setInterval(() => look().catch(() => {}), EVERY_MILLISECONDS);
+setInterval(() => {
+	look().catch(() => {});
+}, EVERY_MILLISECONDS);
