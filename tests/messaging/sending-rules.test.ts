@@ -156,12 +156,10 @@ describe('a message at the moment of sending', () => {
 
 describe('the rate of a sender', () => {
 	it('is shared by all workers', async () => {
-		const limited = (workerId: string) =>
-			openWorld(database, fakes, { workerId, settings: { perSecond: { sms: 10, mail: null } } });
-		const workers = ['a', 'b', 'c'].map(limited);
-		const granted = await Promise.all(workers.map(({ outbox }) => reserveCalls(outbox, 'sms', 8)));
+		const settings = { ...world.outbox.settings, perSecond: { sms: 10, mail: null } };
+		const workers = ['a', 'b', 'c'].map((workerId) => ({ ...world.outbox, settings, workerId }));
+		const granted = await Promise.all(workers.map((outbox) => reserveCalls(outbox, 'sms', 8)));
 		expect(granted.reduce((sum, count) => sum + count, 0)).toBe(10);
-		for (const worker of workers) worker.close();
 		expect(await db.select().from(senders)).toHaveLength(1);
 	});
 });
