@@ -157,7 +157,10 @@ describe('a message at the moment of sending', () => {
 describe('the rate of a sender', () => {
 	it('is shared by all workers', async () => {
 		const settings = { ...world.outbox.settings, perSecond: { sms: 10, mail: null } };
-		const workers = ['a', 'b', 'c'].map((workerId) => ({ ...world.outbox, settings, workerId }));
+		// One instant for all: a clock that moves on between them would shorten the last one's second.
+		const instant = world.clock.now();
+		const ctx = { ...world.outbox.ctx, clock: { now: () => instant } };
+		const workers = ['a', 'b', 'c'].map((workerId) => ({ ...world.outbox, ctx, settings, workerId }));
 		const granted = await Promise.all(workers.map((outbox) => reserveCalls(outbox, 'sms', 8)));
 		expect(granted.reduce((sum, count) => sum + count, 0)).toBe(10);
 		expect(await db.select().from(senders)).toHaveLength(1);
