@@ -63,8 +63,7 @@ const incomingFirst = (line: ThreadLine): number => (line.from === 'family' ? 0 
 /** In the order of time; an answer of the same millisecond stands after the words it answers. */
 const inTime = (lines: readonly ThreadLine[]): ThreadLine[] =>
 	[...lines].sort(
-		(a, b) =>
-			a.at.getTime() - b.at.getTime() || incomingFirst(a) - incomingFirst(b) || (a.id < b.id ? -1 : 1)
+		(a, b) => a.at.getTime() - b.at.getTime() || incomingFirst(a) - incomingFirst(b) || (a.id < b.id ? -1 : 1)
 	);
 
 function threadCarer(carer: Head['carers'][number]): ThreadCarer {
