@@ -171,7 +171,7 @@ test.describe('the call panel', () => {
 		await places.last().check({ force: true });
 		await visit.getByLabel('Why it moves').fill('The father works in the morning');
 		await visit.getByRole('button', { name: 'Move the visit here' }).click();
-		await expect(page.getByText('The visit was moved.')).toBeFocused();
+		await expect(page.getByRole('status').filter({ hasText: 'The visit was moved.' })).toBeFocused();
 		await expect(part(page, 'Also owed')).toHaveCount(0);
 	});
 
