@@ -1,7 +1,7 @@
 import { type ChildProcess, spawn } from 'node:child_process';
 import { once } from 'node:events';
 import { parseArgs } from 'node:util';
-import { count, eq, min, ne, sql } from 'drizzle-orm';
+import { eq, inArray, min, sql } from 'drizzle-orm';
 import { z } from 'zod';
 import { type Db, openDatabase } from '../../src/lib/server/db/client';
 import { messages } from '../../src/lib/server/db/schema/messaging';
@@ -14,7 +14,7 @@ import { insertPlainMessages, insertPlainSites } from './plain-messages';
  * Messages per second through the whole path (claim, SDK, fake, record, each with its durable commit) at 1, 2 and 4 workers,
  * as a ratio to a bare loop over the same SDK and fake with no durability at all, at equal concurrency. Both are measured in
  * turn, several times, and the medians compared.
- * `npm run bench -- messages [--messages 6000] [--rounds 3] [--concurrency 16]`
+ * `npm run bench -- messages [--messages 6000] [--rounds 3] [--concurrency 16] [--workers 1,2,4]`
  */
 
 const WARM_UP = 400;
@@ -77,10 +77,12 @@ async function measureWorkers(bench: Bench, workers: number): Promise<number> {
 	return total / ((lastAt - Number(first?.at)) / 1000);
 }
 
+/** Looks for any message that is left by the claim index, which costs the database next to nothing. */
 async function untilSent(db: Db): Promise<void> {
+	const isLeft = inArray(messages.state, ['planned', 'sending', 'unknown']);
 	for (;;) {
-		const [row] = await db.select({ left: count() }).from(messages).where(ne(messages.state, 'sent'));
-		if (row?.left === 0) return;
+		const left = await db.select({ state: messages.state }).from(messages).where(isLeft).limit(1);
+		if (left.length === 0) return;
 		await new Promise((resolve) => setTimeout(resolve, 25));
 	}
 }
@@ -124,7 +126,8 @@ async function main(): Promise<void> {
 		options: {
 			messages: { type: 'string', default: '6000' },
 			rounds: { type: 'string', default: '3' },
-			concurrency: { type: 'string', default: '16' }
+			concurrency: { type: 'string', default: '16' },
+			workers: { type: 'string', default: '1,2,4' }
 		}
 	});
 	const databaseUrl = process.env.DATABASE_URL;
@@ -151,7 +154,9 @@ async function main(): Promise<void> {
 		);
 		console.log('workers whole path   bare loop    ratio');
 		const ratios: number[] = [];
-		for (const workers of [1, 2, 4]) ratios.push(await compare(bench, workers, Number(values.rounds)));
+		for (const workers of values.workers.split(',').map(Number)) {
+			ratios.push(await compare(bench, workers, Number(values.rounds)));
+		}
 		console.log(
 			`Goal: at least ${GOAL}. ${ratios.every((ratio) => ratio >= GOAL) ? 'Reached.' : 'Not reached.'}`
 		);

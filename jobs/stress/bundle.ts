@@ -1,3 +1,4 @@
+import { rmSync } from 'node:fs';
 import { basename } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { build } from 'vite';
@@ -12,6 +13,7 @@ export async function bundleJobs(files: readonly string[]): Promise<string[]> {
 	const outDir = fileURLToPath(
 		new URL(`../../node_modules/.cache/fadewell-jobs/${process.pid}`, import.meta.url)
 	);
+	process.once('exit', () => rmSync(outDir, { recursive: true, force: true }));
 	const names = files.map((file) => basename(file, '.ts'));
 	await build({
 		root: ROOT,

@@ -162,7 +162,7 @@ describe('the rate of a sender', () => {
 		const ctx = { ...world.outbox.ctx, clock: { now: () => instant } };
 		const workers = ['a', 'b', 'c'].map((workerId) => ({ ...world.outbox, ctx, settings, workerId }));
 		const granted = await Promise.all(workers.map((outbox) => reserveCalls(outbox, 'sms', 8)));
-		expect(granted.reduce((sum, count) => sum + count, 0)).toBe(10);
+		expect(granted.reduce((sum, one) => sum + one.granted, 0)).toBe(10);
 		expect(await db.select().from(senders)).toHaveLength(1);
 	});
 });

@@ -111,7 +111,10 @@ export class Lane {
 		const lease = new Lease(`${workerId}/${this.#channel}${++this.#claims}`, settings.leaseSeconds);
 		const taken = await takeDue(this.#outbox, this.#channel, settings.batch, lease.token);
 		const { looked: count, held, isContended } = taken;
-		if (held.length > 0) this.#leases.set(lease.token, lease);
+		if (held.length > 0) {
+			this.#leases.set(lease.token, lease);
+			this.#recorder.isUnbroken = taken.isUnbroken;
+		}
 		this.#ready.push(...held.map((one) => ({ held: one, lease })));
 		this.#call();
 		return { count, isContended };

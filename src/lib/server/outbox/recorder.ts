@@ -8,7 +8,7 @@ import { reportCalls } from './senders';
 const AT_ONCE = 200;
 const GIVE_UP_AFTER = 40;
 
-/** Gathers outcomes for a few milliseconds and records them together, one transaction at a time. */
+/** Gathers outcomes for a moment and records them together, one transaction at a time. */
 export class Recorder {
 	readonly #outbox: Outbox;
 	readonly #channel: Channel;
@@ -18,6 +18,8 @@ export class Recorder {
 	#isRunning = false;
 	/** Nobody should call before; set by what the last outcomes told about the provider. */
 	pausedUntil: Date | null = null;
+	/** The sender had no failures when calls were last granted, so successes are no news. */
+	isUnbroken = false;
 
 	constructor(outbox: Outbox, channel: Channel, onRecorded: () => void) {
 		this.#outbox = outbox;
@@ -69,8 +71,11 @@ export class Recorder {
 	}
 
 	async #report(batch: readonly Called[]): Promise<void> {
+		const news = newsOf(batch);
+		if (this.isUnbroken && news.failures === 0 && !news.pauseSeconds) return;
+		this.isUnbroken = false;
 		try {
-			this.pausedUntil = await reportCalls(this.#outbox, this.#channel, newsOf(batch));
+			this.pausedUntil = await reportCalls(this.#outbox, this.#channel, news);
 		} catch (error) {
 			this.#outbox.ctx.log.error({ err: error }, 'the state of the sender could not be saved');
 		}

@@ -18,26 +18,30 @@ const FRESH: SenderState = { pausedUntil: null, failuresInARow: 0, rateFreeAt: n
  * How many of `wanted` calls this worker may make now, by the sender's rate and breaker, which all workers share. The row is
  * locked only when there is something to count, and never while messages are.
  */
-export async function reserveCalls(outbox: Outbox, channel: Channel, wanted: number): Promise<number> {
+export async function reserveCalls(
+	outbox: Outbox,
+	channel: Channel,
+	wanted: number
+): Promise<{ readonly granted: number; readonly isUnbroken: boolean }> {
 	const { ctx, settings } = outbox;
 	const perSecond = settings.perSecond[channel];
 	const now = ctx.clock.now();
 	const seen = await findSender(ctx.db, channel);
-	if (perSecond === null && isUnbroken(seen)) return wanted;
-	if (seen.pausedUntil !== null && seen.pausedUntil > now) return 0;
+	const known = { isUnbroken: isUnbroken(seen) && seen.failuresInARow === 0 };
+	if (perSecond === null && isUnbroken(seen)) return { granted: wanted, ...known };
+	if (seen.pausedUntil !== null && seen.pausedUntil > now) return { granted: 0, ...known };
 	const probeSeconds = settings.callSeconds + settings.breakerSeconds;
 	return withTx(ctx.db, async (tx) => {
 		const sender = await lockSender(tx, channel);
 		const { granted, next } = grantCalls(sender, wanted, now, { perSecond, probeSeconds });
 		await saveSender(tx, channel, next);
-		return granted;
+		return { granted, ...known };
 	});
 }
 
 /** Tells all workers how a batch of calls went. Returns until when nobody should call; null when calls may go on. */
 export async function reportCalls(outbox: Outbox, channel: Channel, news: SenderNews): Promise<Date | null> {
 	const { ctx, settings } = outbox;
-	if (news.failures === 0 && !news.pauseSeconds && isUnbroken(await findSender(ctx.db, channel))) return null;
 	const now = ctx.clock.now();
 	const fraction = ctx.random.fraction();
 	const next = await withTx(ctx.db, async (tx) => {

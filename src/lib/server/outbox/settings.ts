@@ -19,12 +19,12 @@ export interface OutboxSettings {
 }
 
 export const DEFAULT_OUTBOX_SETTINGS: OutboxSettings = {
-	batch: 64,
+	batch: 100,
 	concurrency: 16,
 	leaseSeconds: 60,
 	callSeconds: 10,
 	settleSeconds: 20,
 	breakerSeconds: 15,
-	gatherMilliseconds: 8,
+	gatherMilliseconds: 75,
 	perSecond: { sms: 50, mail: 50 }
 };

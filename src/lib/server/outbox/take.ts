@@ -18,9 +18,11 @@ export interface Taken {
 	readonly held: readonly Held[];
 	/** Something is due but locked for the moment: by another worker's claim, or as the neighbour of one in the index. */
 	readonly isContended: boolean;
+	/** The sender's breaker, as it was when the calls were granted: a success has nothing to repair. */
+	readonly isUnbroken: boolean;
 }
 
-const NOTHING: Taken = { looked: 0, held: [], isContended: false };
+const NOTHING: Taken = { looked: 0, held: [], isContended: false, isUnbroken: true };
 
 /**
  * Takes up to `limit` due messages of a channel: locks them, checks each against its follow-up as it is now, renders it, and
@@ -37,7 +39,7 @@ export async function takeDue(
 	const now = ctx.clock.now();
 	const groups = await findDueGroups(ctx.db, channel, now);
 	if (groups.length === 0) return NOTHING;
-	const granted = await reserveCalls(outbox, channel, limit);
+	const { granted, isUnbroken } = await reserveCalls(outbox, channel, limit);
 	if (granted === 0) return NOTHING;
 	return withTx(ctx.db, async (tx) => {
 		const fraction = ctx.random.fraction();
@@ -45,7 +47,7 @@ export async function takeDue(
 		if (rows.length === 0) return { ...NOTHING, isContended: true };
 		const held = await checkAndRender(tx, outbox, { rows, now, token });
 		await markBegun(tx, outbox, held);
-		return { looked: rows.length, held, isContended: false };
+		return { looked: rows.length, held, isContended: false, isUnbroken };
 	});
 }
 
