@@ -10,5 +10,5 @@ export const TONE_CLASS: Record<Tone, string> = {
 	done: 'border-transparent text-ink-soft px-0',
 	waits: 'rounded-sm border-waits-mark border-s-4 bg-waits-wash text-waits px-2',
 	late: 'rounded-none border-late bg-late text-on-late px-2',
-	danger: 'rounded-none border-late border-2 bg-late-wash text-late px-2 hatched'
+	danger: 'rounded-none border-late border-2 bg-late-wash text-late pe-2 hatched'
 };
