@@ -33,6 +33,9 @@ export interface DemoNewborn {
 	readonly clinic?: 0 | 1;
 }
 
+/** A serum value so many hours after birth, so far below the line. */
+export const at = (hour: number, below: number): DemoValue => ({ hour, below });
+
 let serial = 0;
 
 /** A number from the range kept for fiction, 555-0100 to 555-0199, with the area code making it each family's own. */

@@ -66,7 +66,6 @@ export const followUps = mysqlTable(
 
 		outcome: asciiWord({ length: 24 }).$type<Outcome>(),
 		closedAt: instant(),
-		closedBy: recordId(),
 		mergedIntoId: recordId(),
 
 		/** Grows with every save; a save names the version it read. */

@@ -1,0 +1,1 @@
+ALTER TABLE `follow_ups` DROP COLUMN `closed_by`;
