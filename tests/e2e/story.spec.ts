@@ -1,3 +1,4 @@
+import { AxeBuilder } from '@axe-core/playwright';
 import { expect, test, type Browser, type Page } from '@playwright/test';
 import { DateTime } from 'luxon';
 import mysql from 'mysql2/promise';
@@ -93,9 +94,15 @@ async function linkOnTelephone(page: Page): Promise<string> {
 	return link;
 }
 
+async function expectAccessible(page: Page): Promise<void> {
+	const { violations } = await new AxeBuilder({ page }).analyze();
+	expect(violations.map(({ id, nodes }) => `${id}: ${nodes[0]?.html ?? ''}`)).toEqual([]);
+}
+
 async function parentAnswers(page: Page, link: string): Promise<void> {
 	await page.goto(link);
 	await expect(page.getByRole('heading', { level: 1 })).toContainText('Robin');
+	await expectAccessible(page);
 	await page.getByRole('button', { name: 'Yes, we will come' }).click();
 	await expect(page.getByText('You said you will come')).toBeVisible();
 	await page.getByRole('link', { name: 'Answer the questions' }).click();
@@ -113,6 +120,7 @@ async function parentAnswers(page: Page, link: string): Promise<void> {
 	await choose('urineColour', 'pale');
 	await page.getByRole('button', { name: 'Send my answers' }).click();
 	await expect(page.getByRole('alert')).toContainText('Please look at these answers');
+	await expectAccessible(page);
 	await expect(page.locator('[name=feedsIn24Hours]')).toHaveValue('9');
 	for (const [field, value] of [
 		['waking', 'wakes-for-feeds'],
@@ -127,6 +135,7 @@ async function parentAnswers(page: Page, link: string): Promise<void> {
 	}
 	await page.getByRole('button', { name: 'Send my answers' }).click();
 	await expect(page.getByRole('heading', { level: 1 })).toContainText('needs to be seen today');
+	await expectAccessible(page);
 }
 
 async function deskReceives(page: Page): Promise<void> {
