@@ -14,6 +14,8 @@ export const PLAUSIBLE = {
 	measurements: 100
 } as const;
 
+const BORN_FROM_MS = Date.UTC(PLAUSIBLE.bornFromYear, 0, 1);
+
 /** The latest instant that may have happened; absent, the future is not looked at. */
 export interface CheckOptions {
 	readonly notAfter?: Date;
@@ -88,7 +90,7 @@ function checkBirth(input: AssessmentInput, notAfterMs: number, refusals: Refusa
 		refuse(refusals, 'instant-unreadable', 'bornAt', 'Give date and time of birth with the offset from UTC.');
 		return;
 	}
-	if (input.bornAt.getUTCFullYear() < PLAUSIBLE.bornFromYear) {
+	if (bornMs < BORN_FROM_MS) {
 		refuse(
 			refusals,
 			'birth-implausible',

@@ -12,6 +12,7 @@ import {
 import type { AssessmentInput, Caution, Measurement, PhototherapyCourse } from './types';
 import { valueIn } from './units';
 
+const NO_READINGS: readonly Reading[] = [];
 const NO_COURSE: Treatment = { courses: [], last: null, running: false, stopMs: NaN };
 
 /**
@@ -54,8 +55,18 @@ function treatmentOf(given: readonly PhototherapyCourse[]): Treatment {
 }
 
 /** In order of time; of two at one instant the serum value comes last and so is preferred. */
-function inOrder(a: Measurement, b: Measurement): number {
-	return a.at.getTime() - b.at.getTime() || (a.method === 'serum' ? 1 : -1);
+function inOrder(a: Reading, b: Reading): number {
+	return a.atMs - b.atMs || (a.serum ? 1 : -1);
+}
+
+/** Records mostly come in order, and looking is cheaper than sorting. */
+function areInOrder(readings: readonly Reading[]): boolean {
+	let before: Reading | undefined;
+	for (const reading of readings) {
+		if (before && inOrder(before, reading) > 0) return false;
+		before = reading;
+	}
+	return true;
 }
 
 function read(known: Case, standard: Standard): Reading[] {
@@ -65,10 +76,12 @@ function read(known: Case, standard: Standard): Reading[] {
 		const measurement = given[i];
 		if (measurement) readings.push(readingOf(measurement, i, known, standard));
 	}
-	if (readings.length > 1) readings.sort((a, b) => inOrder(a.measurement, b.measurement));
+	if (!areInOrder(readings)) readings.sort(inOrder);
 	for (let i = 0; i < readings.length; i++) {
 		const reading = readings[i];
-		if (reading && !reading.serum) reading.distrust = standard.distrust(reading, readings.slice(0, i), known);
+		if (reading && !reading.serum) {
+			reading.distrust = standard.distrust(reading, i === 0 ? NO_READINGS : readings.slice(0, i), known);
+		}
 	}
 	return readings;
 }

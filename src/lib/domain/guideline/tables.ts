@@ -28,7 +28,9 @@ export function decodePoints(text: string): readonly Point[] {
 export function valueAt(points: readonly Point[], hours: number): number {
 	let before = points[0];
 	if (!before || hours < before.hour) throw new RangeError(`the curve does not reach hour ${hours}`);
-	for (const point of points) {
+	for (let i = 1; i < points.length; i++) {
+		const point = points[i];
+		if (!point) break;
 		if (point.hour > hours) {
 			return (
 				before.value + ((point.value - before.value) * (hours - before.hour)) / (point.hour - before.hour)
