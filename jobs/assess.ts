@@ -1,8 +1,8 @@
 import { createReadStream, statSync } from 'node:fs';
 import { HELP, readOptions, type AssessOptions } from './assess/options';
 import { startProgress } from './assess/progress';
-import { UnreadableInput } from './assess/rows';
 import { runBatch } from './assess/run';
+import { UnreadableInput } from './assess/unreadable-input';
 
 /** Assesses a file of newborns for quality teams; see HELP. Needs no database, no build and no settings. */
 

@@ -46,6 +46,11 @@ export function assessLine(line: string, options: RecordOptions): LineResult {
 	return assessRaw(raw, options);
 }
 
+/** The line in place of what is no record at all. */
+export function unreadable(message: string): LineResult {
+	return refusedLine(toRefusedRecord(null, [{ code: 'unreadable', field: '', message }]));
+}
+
 function refusedLine(refused: RefusedRecord): LineResult {
 	return { text: JSON.stringify(refused), refused };
 }

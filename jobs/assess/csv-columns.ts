@@ -37,8 +37,48 @@ export function headerProblem(header: readonly string[]): string | null {
 	return new Set(header).size < header.length ? 'The header names a column twice.' : null;
 }
 
-const list = (cell: string): string[] =>
-	cell.trim() === '' ? [] : cell.split(';').map((item) => item.trim());
+/** From a header that was found good to the function that turns a row's cells into a JSON record, not yet checked. */
+export function recordReader(header: readonly string[]): (cells: readonly string[]) => unknown {
+	const places = new Map(header.map((name, place) => [name, place]));
+	const cellOf = (name: (typeof CSV_COLUMNS)[number]) => {
+		const place = places.get(name) ?? -1;
+		return (cells: readonly string[]): string => (cells[place] ?? '').trim();
+	};
+	const id = cellOf('id');
+	const standard = cellOf('standard');
+	const gestationalAge = cellOf('gestationalAge');
+	const bornAt = cellOf('bornAt');
+	const dischargeAt = cellOf('dischargeAt');
+	const neurotoxicityRisks = cellOf('neurotoxicityRisks');
+	const jaundiceRisks = cellOf('jaundiceRisks');
+	const feeding = cellOf('feeding');
+	const albuminGramsPerDecilitre = cellOf('albuminGramsPerDecilitre');
+	const bilirubin = cellOf('bilirubin');
+	const phototherapy = cellOf('phototherapy');
+	return (cells) => {
+		const albumin = albuminGramsPerDecilitre(cells);
+		return {
+			id: id(cells),
+			standard: standard(cells),
+			gestationalAge: gestationalAge(cells),
+			bornAt: bornAt(cells),
+			dischargeAt: dischargeAt(cells),
+			neurotoxicityRisks: partsOf(neurotoxicityRisks(cells), ';'),
+			jaundiceRisks: partsOf(jaundiceRisks(cells), ';'),
+			feeding: feeding(cells),
+			...(albumin === '' ? {} : { albuminGramsPerDecilitre: number(albumin) }),
+			bilirubin: partsOf(bilirubin(cells), ';').map(measurement),
+			phototherapy: partsOf(phototherapy(cells), ';').map(course)
+		};
+	};
+}
+
+function partsOf(text: string, mark: ';' | '|'): string[] {
+	if (text === '') return [];
+	const parts = text.split(mark);
+	for (let i = 0; i < parts.length; i++) parts[i] = (parts[i] ?? '').trim();
+	return parts;
+}
 
 /** A number as written; anything else stays text, so that the schema refuses it by name. */
 function number(text: string): number | string {
@@ -46,32 +86,14 @@ function number(text: string): number | string {
 }
 
 function measurement(item: string): unknown {
-	const [at, method, total, direct, unit, ...more] = item.split('|').map((part) => part.trim());
+	const [at, method, total = '', direct, unit, ...more] = partsOf(item, '|');
 	if (unit === undefined || more.length > 0) return item;
-	return { at, method, total: number(total ?? ''), ...(direct ? { direct: number(direct) } : {}), unit };
+	if (!direct) return { at, method, total: number(total), unit };
+	return { at, method, total: number(total), direct: number(direct), unit };
 }
 
 function course(item: string): unknown {
-	const [from, to, setting, ...more] = item.split('|').map((part) => part.trim());
+	const [from, to, setting, ...more] = partsOf(item, '|');
 	if (setting === undefined || more.length > 0) return item;
 	return { from, ...(to ? { to } : {}), setting };
-}
-
-/** A row to the shape of a JSON record, not yet checked. */
-export function recordOfRow(row: Readonly<Record<string, string>>): unknown {
-	const cell = (name: (typeof CSV_COLUMNS)[number]): string => (row[name] ?? '').trim();
-	const albumin = cell('albuminGramsPerDecilitre');
-	return {
-		id: cell('id'),
-		standard: cell('standard'),
-		gestationalAge: cell('gestationalAge'),
-		bornAt: cell('bornAt'),
-		dischargeAt: cell('dischargeAt'),
-		neurotoxicityRisks: list(cell('neurotoxicityRisks')),
-		jaundiceRisks: list(cell('jaundiceRisks')),
-		feeding: cell('feeding'),
-		...(albumin === '' ? {} : { albuminGramsPerDecilitre: number(albumin) }),
-		bilirubin: list(cell('bilirubin')).map(measurement),
-		phototherapy: list(cell('phototherapy')).map(course)
-	};
 }

@@ -1,6 +1,6 @@
 import type { Readable, Writable } from 'node:stream';
 import type { RecordOptions } from '../../src/lib/schemas/assessment-record';
-import { assessLine, assessRaw, type LineResult } from './assess-line';
+import { assessLine, assessRaw, unreadable, type LineResult } from './assess-line';
 import { lineBatches } from './lines';
 import type { Progress } from './progress';
 import { rowBatches } from './rows';
@@ -25,7 +25,7 @@ export async function runBatch(batch: Batch): Promise<Counts> {
 	const work = new Work(batch);
 	if (batch.format === 'csv') await runRows(batch, work);
 	else await runLines(batch, work);
-	await work.settle(true);
+	await work.settle();
 	return { records: work.records, refused: work.refused };
 }
 
@@ -49,7 +49,8 @@ async function runRows({ input, options, progress }: Batch, work: Work): Promise
 	});
 	let shown = 0;
 	for await (const rows of rowBatches(input)) {
-		for (const { lineNumber, raw } of rows) work.add(lineNumber, assessRaw(raw, options));
+		for (const { lineNumber, raw, problem } of rows)
+			work.add(lineNumber, problem === null ? assessRaw(raw, options) : unreadable(problem));
 		progress.advance(read - shown, rows.length);
 		shown = read;
 		await work.settle();
@@ -79,8 +80,8 @@ class Work {
 		this.reasons.line(`line ${lineNumber}, ${refused.id ?? 'no id'}: ${reasons.join(' ')}`);
 	}
 
-	async settle(isLast = false): Promise<void> {
-		await this.results.settle(isLast);
-		await this.reasons.settle(isLast);
+	async settle(): Promise<void> {
+		await this.results.settle();
+		await this.reasons.settle();
 	}
 }

@@ -1,6 +1,7 @@
 import type { Decision, Standard } from '../../src/lib/domain/guideline/standard';
 import type { Caution } from '../../src/lib/domain/guideline/types';
 import { shownHours } from '../../src/lib/domain/guideline/age';
+import { writeInstant } from './write-instant';
 
 /** Texts of cautions are fixed objects, so each is written once. */
 const WRITTEN = new Map<Caution, string>();
@@ -45,5 +46,5 @@ function writeValue(deciding: Decision['deciding'], standard: Standard): string 
 
 function writeWindow({ fromMs, untilMs, test }: Decision['outcome']): string {
 	if (Number.isNaN(untilMs)) return 'null';
-	return `{"from":"${new Date(fromMs).toISOString()}","until":"${new Date(untilMs).toISOString()}","test":"${test}"}`;
+	return `{"from":"${writeInstant(fromMs)}","until":"${writeInstant(untilMs)}","test":"${test}"}`;
 }

@@ -51,7 +51,7 @@ async function copy(file: string): Promise<number> {
 		}
 		await sink.settle();
 	}
-	await sink.settle(true);
+	await sink.settle();
 	return records;
 }
 
@@ -133,7 +133,7 @@ async function writeBirths(file: string, count: number): Promise<void> {
 		sink.line(JSON.stringify(invent(random, i)));
 		if (i % 1000 === 0) await sink.settle();
 	}
-	await sink.settle(true);
+	await sink.settle();
 	stream.end();
 	await once(stream, 'finish');
 }

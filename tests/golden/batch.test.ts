@@ -1,4 +1,5 @@
 import { spawn } from 'node:child_process';
+import { once } from 'node:events';
 import { readFileSync } from 'node:fs';
 import { PassThrough, Readable } from 'node:stream';
 import { text } from 'node:stream/consumers';
@@ -7,9 +8,10 @@ import * as fc from 'fast-check';
 import { describe, expect, it, vi } from 'vitest';
 import { assessLine, assessRaw } from '../../jobs/assess/assess-line';
 import { CSV_COLUMNS } from '../../jobs/assess/csv-columns';
-import { lineBatches } from '../../jobs/assess/lines';
+import { lineBatches, LONGEST_LINE_BYTES } from '../../jobs/assess/lines';
 import { readRecord } from '../../jobs/assess/read-record';
 import { runBatch } from '../../jobs/assess/run';
+import { writeInstant } from '../../jobs/assess/write-instant';
 import { invent, seeded } from '../../jobs/bench/births';
 import {
 	assessmentInputSchema,
@@ -19,7 +21,7 @@ import {
 } from '../../src/lib/schemas/assessment';
 import { assessBody } from '../../src/lib/schemas/assessment-request';
 import { assessRecord } from '../../src/lib/schemas/assessment-record';
-import { parseInstant } from '../../src/lib/schemas/instant';
+import { INSTANT, parseInstant } from '../../src/lib/schemas/instant';
 import { PUBLISHED_SCHEMAS } from '../../src/lib/schemas/assessment-published';
 
 vi.setConfig({ testTimeout: 120_000 });
@@ -155,6 +157,68 @@ describe('instants', () => {
 	});
 });
 
+describe('the usual form of an instant, read and written by hand', () => {
+	const offset = fc
+		.tuple(fc.constantFrom('+', '-'), fc.nat({ max: 14 }), fc.nat({ max: 59 }))
+		.map(
+			([sign, hours, minutes]) =>
+				`${sign}${String(hours).padStart(2, '0')}:${String(minutes).padStart(2, '0')}`
+		);
+	const anyDate = fc.date({ min: new Date('0001-01-01'), max: new Date('9999-12-31'), noInvalidDate: true });
+
+	it('is the instant that Date.parse reads', () => {
+		fc.assert(
+			fc.property(anyDate, offset, (date, zone) => {
+				const written = `${date.toISOString().slice(0, 19)}${zone}`;
+				expect(parseInstant(written)).toBe(Date.parse(written));
+			}),
+			{ numRuns: 5000 }
+		);
+	});
+
+	it('has the days of the calendar and no others', () => {
+		for (let year = 1896; year <= 2104; year++) {
+			for (let month = 1; month <= 12; month++) {
+				for (let day = 1; day <= 31; day++) {
+					const date = [year, month, day].map((part) => String(part).padStart(2, '0')).join('-');
+					const exists = new Date(Date.UTC(year, month - 1, day)).getUTCDate() === day;
+					const read = parseInstant(`${date}T12:00:00+00:00`);
+					if (exists) expect(read).toBe(Date.parse(`${date}T12:00:00Z`));
+					else expect(read).toBeNaN();
+				}
+			}
+		}
+	});
+
+	it('takes just what the pattern takes, however one letter is changed', () => {
+		fc.assert(
+			fc.property(
+				anyDate,
+				offset,
+				fc.nat({ max: 24 }),
+				fc.constantFrom(...'0123456789-+:TZ. x'),
+				(date, zone, at, letter) => {
+					const written = `${date.toISOString().slice(0, 19)}${zone}`;
+					const changed = written.slice(0, at) + letter + written.slice(at + 1);
+					if (!INSTANT.test(changed)) expect(parseInstant(changed)).toBeNaN();
+					else if (Number(changed.slice(8, 10)) <= 28)
+						expect(parseInstant(changed)).toBe(Date.parse(changed));
+				}
+			),
+			{ numRuns: 5000 }
+		);
+	});
+
+	it('is written as toISOString writes it', () => {
+		fc.assert(
+			fc.property(anyDate, (date) => {
+				expect(writeInstant(date.getTime())).toBe(date.toISOString());
+			}),
+			{ numRuns: 5000 }
+		);
+	});
+});
+
 describe('lines of a stream', () => {
 	it('are the same wherever the pieces are cut, also inside a letter', async () => {
 		const whole = '\ufeffä\u{1F476}1\r\n\nβ2\nlast';
@@ -267,10 +331,35 @@ describe('npm run assess', () => {
 		expect(code).toBe(1);
 	});
 
+	it('refuses a row with too few cells in its place and counts lines inside quoted cells', async () => {
+		const header = CSV_COLUMNS.join(',');
+		const two = '"b\n1",aap-2022,40+0,2026-03-01T00:00:00Z,2026-03-03T02:00:00Z,,sneezing,breast,,,';
+		const { code, out, err } = await run(['--format', 'csv'], `${header}\r\n\r\n${two}\r\nb-2,aap-2022\r\n`);
+		expect(err).toMatch(/^line 4, b\n1: jaundiceRisks\[0\]/m);
+		expect(err).toMatch(/^line 5, no id: The row has 2 cells, the header 11\.$/m);
+		expect(out.trim().split('\n')).toHaveLength(2);
+		expect(code).toBe(1);
+	});
+
+	it('answers each line as it comes, before the input ends', async () => {
+		const input = new PassThrough();
+		const output = new PassThrough();
+		const silent = { advance: () => {}, makeRoom: () => {}, stop: () => {} };
+		const errors = new PassThrough();
+		const done = runBatch({ input, format: 'json', output, errors, progress: silent, options: OPTIONS });
+		input.write(`${JSON.stringify(good)}\n`);
+		const [first] = await once(output, 'data');
+		expect(JSON.parse(String(first))).toMatchObject({ id: 'b-1' });
+		input.end();
+		await done;
+	});
+
 	it('says what is wrong with the command or the file, and exits 2', async () => {
 		expect((await run(['--format', 'xml'], '')).code).toBe(2);
 		expect((await run(['no-such-file.ndjson'], '')).err).toMatch(/cannot be read/);
 		expect((await run(['--format', 'csv'], 'id,standard\n1,aap-2022\n')).err).toMatch(/header lacks/);
+		const endless = await run([], '['.padEnd(LONGEST_LINE_BYTES + 1, ' '));
+		expect(endless).toMatchObject({ code: 2, out: '', err: expect.stringMatching(/line 1 is longer than/) });
 	});
 });
 
