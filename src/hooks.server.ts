@@ -3,6 +3,7 @@ import { textDirection } from '$lib/domain/messaging/language';
 import { appContext, closeAppContext } from '$lib/server/app-context';
 import { decideAccess, needOf } from '$lib/server/auth/route-access';
 import { readSession, sessionCookieName } from '$lib/server/auth/session';
+import { isTooLong } from '$lib/server/http/body-limit';
 import { setSessionCookie } from '$lib/server/http/cookies';
 import { describeFailure } from '$lib/server/failure';
 import { isForged } from '$lib/server/http/forgery';
@@ -71,6 +72,16 @@ const refuseForgery: Handle = ({ event, resolve }) => {
 	return refuse(event, 403, 'This form was sent from another site, so nothing was done.', errorPage);
 };
 
+const limitBody: Handle = ({ event, resolve }) => {
+	if (!isTooLong(event.request, event.route.id ?? '')) return resolve(event);
+	return refuse(
+		event,
+		413,
+		'What was sent is too long, so nothing was done. Send it in smaller parts.',
+		errorPage
+	);
+};
+
 const findActor: Handle = async ({ event, resolve }) => {
 	const { ctx } = event.locals;
 	const cookie = event.cookies.get(sessionCookieName(ctx));
@@ -122,7 +133,15 @@ const fillShell: Handle = ({ event, resolve }) =>
 				.replace('%theme%', event.locals.theme)
 	});
 
-export const handle = sequence(identify, setHeaders, refuseForgery, findActor, checkAccess, fillShell);
+export const handle = sequence(
+	identify,
+	setHeaders,
+	refuseForgery,
+	limitBody,
+	findActor,
+	checkAccess,
+	fillShell
+);
 
 /** Logs the cause without names and telephone numbers; the person gets a plain sentence and the number to ask by. */
 function reportFailure(event: RequestEvent, error: unknown, status: number) {

@@ -52,13 +52,14 @@ export function localVariables({ ports, secrets, dataDir }) {
 		LOG_LEVEL: 'info',
 		DEMO: '1',
 		DATA_DIR: dataDir,
-		SHUTDOWN_TIMEOUT: '5'
+		SHUTDOWN_TIMEOUT: '5',
+		BODY_SIZE_LIMIT: '4M'
 	};
 }
 
 /**
- * Lays the person's `.env` over the local settings; its ports are in them already. The database stays the private one, and with a real provider in
- * place of a fake the demo is off: its newborns' messages must not leave this machine.
+ * Lays the person's `.env` over the local settings; its ports are in them already. The database stays the private one,
+ * and with a real provider in place of a fake the demo is off: its newborns' messages must not leave this machine.
  * @param {Variables} local @param {Variables} own
  * @returns {{ variables: Variables, remarks: string[] }}
  */

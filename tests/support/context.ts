@@ -31,7 +31,8 @@ export function testEnvironment(databaseUrl: string): Record<string, string> {
 		SMTP_HOST: '127.0.0.1',
 		SMTP_PORT: '9',
 		MAIL_FROM: 'Fadewell <fadewell@example.org>',
-		LOG_LEVEL: 'silent'
+		LOG_LEVEL: 'silent',
+		BODY_SIZE_LIMIT: '4M'
 	};
 }
 
