@@ -64,6 +64,29 @@ describe('the plan in the database', async () => {
 	});
 
 	it.each([
+		// AAP 2022: stool and urine at two weeks, and the breastfed again at three (NASPGHAN 2017). NICE CG98: before
+		// 37 weeks at three weeks, whatever the feeding.
+		['aap-2022', 36, 'breast', ['2026-03-16', '2026-03-23']],
+		['aap-2022', 36, 'formula', ['2026-03-16']],
+		['nice-cg98', 36, 'breast', ['2026-03-23']],
+		['nice-cg98', 37, 'breast', ['2026-03-16']]
+	] as const)(
+		'asks about lasting jaundice as %s says, born at %i weeks, fed by %s',
+		async (standard, weeks, feeding, days) => {
+			const ctx = testContext(database, fixedClock(local('2026-03-03T10:00')));
+			const family = await makeFamily(ctx, {
+				newborn: { bornAt: local('2026-03-02T04:00'), gestationWeeks: weeks, feeding },
+				followUp: { standard, stage: 'later-check', nextStep: 'ask-again-later' }
+			});
+			await replan(ctx, family.followUpId);
+			const asked = (await messagesOf(ctx, family.followUpId)).filter(
+				({ kind }) => kind === 'prolonged-check-ask'
+			);
+			expect(asked.map(({ occasion }) => occasion).sort()).toEqual(days);
+		}
+	);
+
+	it.each([
 		['spring', '2026-03-07T00:00'],
 		['autumn', '2026-10-31T00:00']
 	])(

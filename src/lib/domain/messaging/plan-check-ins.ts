@@ -1,5 +1,4 @@
 import { DateTime } from 'luxon';
-import type { Feeding } from '../guideline/types';
 import { addressed, firstReachable } from './plan-carers';
 import {
 	type PlanCarer,
@@ -75,26 +74,10 @@ function answeredOn(
 	return checkIns.some(({ answeredAt }) => answeredAt < before && localDay(answeredAt, timeZone).equals(day));
 }
 
-/**
- * Days of age at which jaundice that lasts asks for a total and direct bilirubin.
- * Formula-fed 2 weeks, breastfed 3 to 4 weeks (AAP, as in the product's facts 2.7); mixed feeding is asked like breastfed
- * and at 2 weeks too (our reading: the earlier question cannot hurt).
- */
-export function prolongedAskDays(feeding: Feeding): readonly number[] {
-	switch (feeding) {
-		case 'formula':
-			return [14];
-		case 'mixed':
-			return [14, 21, 28];
-		case 'breast':
-			return [21, 28];
-	}
-}
-
 function prolonged(facts: PlanFacts, carer: PlanCarer): PlannedMessage[] {
 	if (facts.stage !== 'later-check') return [];
 	const born = localDay(facts.bornAt, facts.timeZone);
-	const days = prolongedAskDays(facts.feeding).map((days) => born.plus({ days }));
+	const days = facts.prolongedCheckDays.map((days) => born.plus({ days }));
 	if (facts.laterCheckAt) days.push(localDay(facts.laterCheckAt, facts.timeZone));
 	const byDate = new Map(days.map((day) => [day.toFormat('yyyy-MM-dd'), day]));
 	return [...byDate].flatMap(([date, day]) => {

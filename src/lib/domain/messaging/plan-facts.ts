@@ -1,7 +1,7 @@
 import type { SitePolicy } from '../followup/policy';
 import type { Outcome, Stage } from '../followup/states';
 import type { VisitState } from '../followup/visit';
-import type { CheckInResult, Feeding } from '../guideline/types';
+import type { CheckInResult } from '../guideline/types';
 import type { Channel, MessageKind } from './kinds';
 import type { Language } from './language';
 
@@ -44,7 +44,8 @@ export interface PlanFacts {
 	readonly outcome: Outcome | null;
 	readonly closedAt: Date | null;
 	readonly bornAt: Date;
-	readonly feeding: Feeding;
+	/** Days of age at which the standard asks whether jaundice persists. */
+	readonly prolongedCheckDays: readonly number[];
 	/** The hand-over, or the planned discharge while that is still to come. */
 	readonly dischargedAt: Date;
 	readonly windowFromAt: Date | null;

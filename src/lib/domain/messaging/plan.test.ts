@@ -29,7 +29,7 @@ const facts: PlanFacts = {
 	outcome: null,
 	closedAt: null,
 	bornAt: at('2026-03-01T03:00'),
-	feeding: 'breast',
+	prolongedCheckDays: [14, 21],
 	dischargedAt: at('2026-03-02T15:00'),
 	windowFromAt: at('2026-03-04T00:00'),
 	windowUntilAt: at('2026-03-06T00:00'),
@@ -185,11 +185,11 @@ describe('the plan of messages', () => {
 	it('asks again at the ages of the prolonged-jaundice rule and on the day that was set', () => {
 		const later = { stage: 'later-check' as const, visits: [], laterCheckAt: at('2026-03-18T12:00') };
 		expect(lines(plan(later))).toEqual([
+			'03-15 09:00 prolonged-check-ask mother sms',
 			'03-18 09:00 prolonged-check-ask mother sms',
-			'03-22 09:00 prolonged-check-ask mother sms',
-			'03-29 09:00 prolonged-check-ask mother sms'
+			'03-22 09:00 prolonged-check-ask mother sms'
 		]);
-		const formula = plan({ ...later, feeding: 'formula', laterCheckAt: null });
+		const formula = plan({ ...later, prolongedCheckDays: [14], laterCheckAt: null });
 		expect(lines(formula)).toEqual(['03-15 09:00 prolonged-check-ask mother sms']);
 	});
 

@@ -8,6 +8,7 @@ export type FollowUpRow = typeof followUps.$inferSelect;
 export type VisitRow = typeof visits.$inferSelect;
 export type CarerRow = typeof carers.$inferSelect;
 export type CheckInRow = typeof checkIns.$inferSelect;
+export type NewbornRow = typeof newborns.$inferSelect;
 export type SiteRow = typeof sites.$inferSelect;
 
 /** Holds the follow-up for the rest of the transaction, so that two derivations of its plan run one after the other. */

@@ -1,9 +1,10 @@
+import { prolongedJaundiceChecks } from '../../domain/guideline/index';
 import type { MessageKind } from '../../domain/messaging/kinds';
 import { DERIVED_KINDS, planMessages } from '../../domain/messaging/plan';
 import type { PlanFacts, PlannedMessage } from '../../domain/messaging/plan-facts';
 import type { Ctx } from '../context';
 import type { Tx } from '../db/client';
-import { loadPlanRows, lockFollowUp, type CarerRow, type FollowUpRow } from '../repos/message-facts';
+import { loadPlanRows, lockFollowUp, type CarerRow, type FollowUpRow, type NewbornRow } from '../repos/message-facts';
 import {
 	insertMessages,
 	listMessages,
@@ -53,7 +54,7 @@ export async function loadPlanFacts(
 		outcome: followUp.outcome,
 		closedAt: followUp.closedAt,
 		bornAt: rows.newborn.bornAt,
-		feeding: rows.newborn.feeding,
+		prolongedCheckDays: prolongedCheckDays(followUp, rows.newborn),
 		dischargedAt: followUp.handedOverAt ?? followUp.plannedDischargeAt,
 		windowFromAt: followUp.windowFromAt,
 		windowUntilAt: followUp.windowUntilAt,
@@ -65,6 +66,12 @@ export async function loadPlanFacts(
 		visits: rows.visits.map((visit) => ({ ...visit, isTold: told.has(visit.id) })),
 		checkIns: rows.checkIns
 	};
+}
+
+function prolongedCheckDays({ standard }: FollowUpRow, newborn: NewbornRow): number[] {
+	const { bornAt, feeding, gestationWeeks: weeks, gestationDays: days } = newborn;
+	const checks = prolongedJaundiceChecks({ standard, bornAt, feeding, gestationalAge: { weeks, days } });
+	return checks.map(({ ageDays }) => ageDays);
 }
 
 const TELLING: readonly MessageKind[] = ['visit-booked', 'visit-moved'];
