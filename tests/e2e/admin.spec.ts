@@ -126,4 +126,7 @@ test('an administrator sees no newborn by that role', async ({ page }) => {
 	for (const path of ['/queue', '/waiting', '/discharges', '/search?q=a']) {
 		expect((await page.goto(path))?.status()).toBe(403);
 	}
+	await page.goto('/measures');
+	await expect(page.getByRole('heading', { level: 1 })).toBeVisible();
+	await expect(page.getByRole('search')).toHaveCount(0);
 });

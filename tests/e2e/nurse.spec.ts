@@ -1,9 +1,9 @@
 import AxeBuilder from '@axe-core/playwright';
 import { expect, test, type Page } from '@playwright/test';
+import { fillNewborn } from './fill-newborn';
 
 /** Everybody of the demo has the same password; see the sign-ins that the start command prints. */
 const PASSWORD = 'paper ink amber 2026';
-const HOUR = 3_600_000;
 
 async function asNurse(page: Page): Promise<void> {
 	await page.goto('/sign-in');
@@ -26,46 +26,6 @@ async function expectAccessible(page: Page): Promise<void> {
 	expect(
 		violations.map(({ id, nodes }) => `${id}: ${nodes.map(({ target }) => target.join(' ')).join(', ')}`)
 	).toEqual([]);
-}
-
-/** Date and time boxes of an instant, read off the page's own "Now" so that the unit's zone is the page's to know. */
-async function fillHoursAgo(page: Page, ids: { on: string; time: string }, hoursAgo: number): Promise<void> {
-	const zone = await page.evaluate(
-		() => document.querySelector<HTMLInputElement>('[name=timeZone]')?.value ?? ''
-	);
-	const at = new Date(Date.now() - hoursAgo * HOUR);
-	const [on, time] = new Intl.DateTimeFormat('sv-SE', {
-		timeZone: zone,
-		year: 'numeric',
-		month: '2-digit',
-		day: '2-digit',
-		hour: '2-digit',
-		minute: '2-digit'
-	})
-		.format(at)
-		.split(' ');
-	await page.locator(`[id="${ids.on}"]`).fill(on ?? '');
-	await page.locator(`[id="${ids.time}"]`).fill(time ?? '');
-}
-
-async function fillNewborn(page: Page, recordNumber: string): Promise<void> {
-	await page.getByLabel('Family name').fill('Aldana');
-	await page.getByLabel('Given name').fill('Inés');
-	await page.getByLabel('Record number', { exact: true }).fill(recordNumber);
-	await page.getByLabel('Birth weight').fill('3,240');
-	await fillHoursAgo(page, { on: 'bornOn', time: 'bornTime' }, 40);
-	await page.getByLabel('completed weeks').fill('39');
-	await page.getByLabel('days beyond the weeks').fill('2');
-	await page.locator('[id="measurementMethod[0]"]').selectOption({ label: 'TSB' });
-	await page.locator('[id="measurementTotal[0]"]').fill('9,4');
-	await fillHoursAgo(page, { on: 'measurementOn[0]', time: 'measurementTime[0]' }, 3);
-	await page.getByRole('radio', { name: 'Breast' }).check();
-	await page.getByLabel('Name', { exact: true }).first().fill('Lucía Aldana');
-	await page.getByLabel('Telephone', { exact: true }).first().fill('202 555 0177');
-	await page.getByLabel('Language').first().selectOption({ label: 'Español' });
-	await page.getByLabel('Agreed to text messages').first().check();
-	await fillHoursAgo(page, { on: 'dischargeOn', time: 'dischargeTime' }, -1);
-	await page.getByLabel('Clinic', { exact: true }).selectOption({ index: 1 });
 }
 
 const result = (page: Page) => page.getByRole('region', { name: 'Result' });

@@ -1,5 +1,6 @@
 import AxeBuilder from '@axe-core/playwright';
 import { expect, test, type Page } from '@playwright/test';
+import { fillNewborn } from './fill-newborn';
 
 /** Everybody of the demo has the same password; see the sign-ins that the start command prints. */
 const PASSWORD = 'paper ink amber 2026';
@@ -224,4 +225,18 @@ test('without scripts a wrong value comes back with its sentence and what was ty
 	await expect(form.getByText('The direct part cannot be more than the total.').first()).toBeVisible();
 	await expect(form.getByLabel('Total')).toHaveValue('14.2');
 	await context.close();
+});
+
+test('a newborn who came without being on record is entered at the clinic', async ({ page }) => {
+	await asPediatrician(page);
+	await page.goto('/search?q=Nobodybythatname');
+	await page.getByRole('link', { name: 'Enter a newborn' }).click();
+	await expect(page.getByRole('heading', { level: 1, name: 'New discharge' })).toBeVisible();
+	await scripted(page);
+	await expect(page.getByLabel('Clinic', { exact: true }).locator('option:not([value=""])')).toHaveCount(1);
+	await fillNewborn(page, 'E2E-UNANNOUNCED');
+	await expectAccessible(page);
+	await page.getByRole('button', { name: 'Save for now' }).click();
+	await page.waitForURL(/\/discharges\/[a-z0-9]+\?saved=1$/);
+	await expect(page.getByLabel('Record number', { exact: true })).toHaveValue('E2E-UNANNOUNCED');
 });

@@ -25,7 +25,7 @@ const ELSEWHERE: Record<Exclude<Role, 'admin'>, StaffActor> = {
 /** Written down by hand from "who may do what", so that a slip in the table of permissions shows. */
 const WHO_MAY: Record<Action, readonly Role[]> = {
 	'discharge.view': ['nurse', 'desk', 'pediatrician'],
-	'discharge.enter': ['nurse'],
+	'discharge.enter': ['nurse', 'pediatrician'],
 	'discharge.edit': ['nurse', 'pediatrician'],
 	'values.view-latest': ['nurse', 'desk', 'pediatrician'],
 	'values.view': ['nurse', 'pediatrician'],

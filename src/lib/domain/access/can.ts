@@ -3,7 +3,7 @@ import type { Role, StaffActor } from './roles';
 /** What staff may do; the table below is the only place that says who. */
 export type Action =
 	| 'discharge.view'
-	/** Only at a birth unit does a newborn begin to be followed. */
+	/** A nurse at her birth unit; a pediatrician for a newborn who comes to the clinic and is not on record. */
 	| 'discharge.enter'
 	| 'discharge.edit'
 	| 'values.view-latest'
@@ -69,6 +69,7 @@ const PERMISSIONS: Readonly<Record<Role, Partial<Record<Action, Reach>>>> = {
 	},
 	pediatrician: {
 		'discharge.view': AT_CLINIC,
+		'discharge.enter': AT_CLINIC,
 		'discharge.edit': AT_CLINIC,
 		'values.view-latest': AT_CLINIC,
 		'values.view': AT_CLINIC,

@@ -1,5 +1,5 @@
 import { DateTime } from 'luxon';
-import { can, sitesWhere } from '../../domain/access/can';
+import { can, mayEver, sitesWhere } from '../../domain/access/can';
 import type { StaffActor } from '../../domain/access/roles';
 import { missingForDischarge, type MissingThing } from '../../domain/followup/discharge-missing';
 import type { NextStepKind, Stage } from '../../domain/followup/states';
@@ -109,10 +109,5 @@ export async function listDischarges(ctx: Ctx, actor: StaffActor) {
 		const resource = { organisationId, birthSiteId: page.unit.id, clinicId: page.clinic.id };
 		return rowOf(page, parts, can(actor, 'values.view', resource));
 	});
-	return { now, rows, mayEnter: editableUnits(actor).length > 0 };
+	return { now, rows, mayEnter: mayEver(actor, 'discharge.enter') };
 }
-
-/** Birth units at which the actor enters newborns. */
-export const editableUnits = (actor: StaffActor): string[] => [
-	...new Set(actor.roles.flatMap(({ role, siteId }) => (role === 'nurse' && siteId ? [siteId] : [])))
-];

@@ -10,7 +10,7 @@ import { findDischargePage, findOrganisationRules, listDischargeParts } from '..
 import type { DischargePageRow } from '../repos/discharge-pages';
 import { findNewbornRecord, type CarerRow, type NewbornRecord } from '../repos/newborns';
 import { listSites, type Site } from '../repos/sites';
-import { editableUnits, windowOf } from './discharge-list';
+import { windowOf } from './discharge-list';
 
 export const dischargeResource = ({ newborn, unit, clinic }: DischargePageRow): Resource => ({
 	organisationId: newborn.organisationId,
@@ -21,13 +21,24 @@ export const dischargeResource = ({ newborn, unit, clinic }: DischargePageRow): 
 export interface DischargeSetting {
 	readonly now: Date;
 	readonly standard: StandardId;
-	readonly unit: { readonly id: string; readonly name: string; readonly timeZone: string };
-	readonly clinics: readonly { readonly id: string; readonly name: string; readonly timeZone: string }[];
+	readonly unit: SiteView;
+	/** Every birth unit at which the actor enters newborns, the one of this page among them. */
+	readonly units: readonly SiteView[];
+	readonly clinics: readonly SiteView[];
+}
+
+interface SiteView {
+	readonly id: string;
+	readonly name: string;
+	readonly timeZone: string;
 }
 
 const siteView = ({ id, name, timeZone }: Site) => ({ id, name, timeZone });
 
-/** What a new discharge starts from: the actor's birth unit (the first, or the one asked for), clinics, standard. */
+/**
+ * What a new discharge starts from: a birth unit (the first that the actor may enter at, or the one asked for), the
+ * clinics that may go with it, and the standard.
+ */
 export async function startDischarge(
 	ctx: Ctx,
 	actor: StaffActor,
@@ -35,14 +46,21 @@ export async function startDischarge(
 ): Promise<Result<DischargeSetting & { readonly family: readonly CarerFacts[] }, AppError>> {
 	const rules = await findOrganisationRules(ctx.db, actor.organisationId);
 	const sites = await listSites(ctx.db, actor.organisationId);
-	const own = sites.filter(({ id, kind }) => kind === 'birth-unit' && editableUnits(actor).includes(id));
-	const unit = own.find(({ id }) => id === asked.unitId) ?? own[0];
+	const { organisationId } = actor;
+	const clinicsFor = (birthSiteId: string): Site[] =>
+		sites.filter(
+			({ id: clinicId, kind }) =>
+				kind === 'clinic' && can(actor, 'discharge.enter', { organisationId, birthSiteId, clinicId })
+		);
+	const units = sites.filter(({ id, kind }) => kind === 'birth-unit' && clinicsFor(id).length > 0);
+	const unit = units.find(({ id }) => id === asked.unitId) ?? units[0];
 	if (!rules || !unit) return err(notAllowed);
 	return ok({
 		now: ctx.clock.now(),
 		standard: rules.standard,
 		unit: siteView(unit),
-		clinics: sites.filter(({ kind }) => kind === 'clinic').map(siteView),
+		units: units.map(siteView),
+		clinics: clinicsFor(unit.id).map(siteView),
 		family: asked.familyOf ? await familyOf(ctx, actor, asked.familyOf) : []
 	});
 }

@@ -123,7 +123,7 @@ export async function enterDischarge(
 	{ birthSiteId, facts }: { readonly birthSiteId: string; readonly facts: DischargeFacts }
 ): Promise<Result<SavedDischarge, AppError>> {
 	const resource = { organisationId: actor.organisationId, birthSiteId, clinicId: facts.clinicId };
-	if (!can(actor, 'discharge.edit', resource)) return err(notAllowed);
+	if (!can(actor, 'discharge.enter', resource)) return err(notAllowed);
 	try {
 		return await withTx(ctx.db, async (tx) => {
 			const begun = await begin(tx, ctx, { actor, birthSiteId, facts });

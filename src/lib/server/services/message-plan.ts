@@ -4,7 +4,13 @@ import { DERIVED_KINDS, planMessages } from '../../domain/messaging/plan';
 import type { PlanFacts, PlannedMessage } from '../../domain/messaging/plan-facts';
 import type { Ctx } from '../context';
 import type { Tx } from '../db/client';
-import { loadPlanRows, lockFollowUp, type CarerRow, type FollowUpRow, type NewbornRow } from '../repos/message-facts';
+import {
+	loadPlanRows,
+	lockFollowUp,
+	type CarerRow,
+	type FollowUpRow,
+	type NewbornRow
+} from '../repos/message-facts';
 import {
 	insertMessages,
 	listMessages,

@@ -23,6 +23,12 @@ export const NAVIGATION: readonly NavigationItem[] = [
 	{ href: '/access-record', label: 'Record of access', roles: ['pediatrician', 'admin'] }
 ];
 
+/** Who looks for newborns; an administrator sees nobody's record. */
+const SEARCH_ROLES: readonly Role[] = ['nurse', 'desk', 'pediatrician'];
+
+export const hasSearch = (roles: readonly Role[]): boolean =>
+	roles.some((role) => SEARCH_ROLES.includes(role));
+
 export const ROLE_LABELS: Record<Role, string> = {
 	nurse: 'nurse',
 	desk: 'front desk',

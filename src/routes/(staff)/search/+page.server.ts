@@ -19,5 +19,10 @@ export const load: PageServerLoad = async ({ locals, url }) => {
 			detail: `${found.length} found`
 		});
 	}
-	return { words, found, worksQueue: mayEver(actor, 'queue.view') };
+	return {
+		words,
+		found,
+		worksQueue: mayEver(actor, 'queue.view'),
+		mayEnter: mayEver(actor, 'discharge.enter')
+	};
 };

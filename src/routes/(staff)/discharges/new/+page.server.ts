@@ -13,7 +13,7 @@ async function settingOf({ locals, url }: Pick<RequestEvent, 'locals' | 'url'>) 
 		unitId: url.searchParams.get('unit'),
 		familyOf: url.searchParams.get('family-of')
 	});
-	if (!started.ok) error(403, 'Only a nurse of a birth unit enters a newborn.');
+	if (!started.ok) error(403, 'A nurse of a birth unit or a pediatrician of a clinic enters a newborn.');
 	return started.value;
 }
 
