@@ -12,8 +12,10 @@ const PIECE_BYTES = 1 << 18;
 
 async function main(options: AssessOptions): Promise<number> {
 	const { file, format, withTrace } = options;
+	// Asked for first: a stream of a file that is not there fails later, where nobody waits for it.
+	const totalBytes = file === undefined ? null : statSync(file).size;
 	const input = file === undefined ? process.stdin : createReadStream(file, { highWaterMark: PIECE_BYTES });
-	const progress = startProgress(process.stderr, file === undefined ? null : statSync(file).size);
+	const progress = startProgress(process.stderr, totalBytes);
 	const notAfter = new Date();
 	try {
 		const counts = await runBatch({

@@ -1,5 +1,6 @@
 import { parseArgs } from 'node:util';
 import { z } from 'zod';
+import { STANDARD_IDS } from '../src/lib/domain/guideline/types';
 import { systemClock } from '../src/lib/server/clock';
 import { getConfig } from '../src/lib/server/config';
 import { openDatabase } from '../src/lib/server/db/client';
@@ -18,7 +19,7 @@ const asked = z.object({
 	organisation: z.string().trim().min(2).max(160),
 	administrator: z.string().trim().min(2).max(120),
 	email: z.email(),
-	standard: z.enum(['aap-2022', 'nice-cg98']),
+	standard: z.enum(STANDARD_IDS),
 	emergency: z.string().trim().min(2).max(20)
 });
 

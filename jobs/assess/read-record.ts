@@ -5,6 +5,7 @@
 import {
 	JAUNDICE_RISKS,
 	NEUROTOXICITY_RISKS,
+	STANDARD_IDS,
 	type AssessmentInput,
 	type BilirubinUnit,
 	type Feeding,
@@ -27,6 +28,7 @@ export interface ReadRecord {
 
 const NEUROTOXICITY: ReadonlySet<unknown> = new Set(NEUROTOXICITY_RISKS);
 const JAUNDICE: ReadonlySet<unknown> = new Set(JAUNDICE_RISKS);
+const STANDARDS: ReadonlySet<unknown> = new Set(STANDARD_IDS);
 const FIELDS = 10;
 
 /** The record, or null when it does not fit the published schema. */
@@ -69,7 +71,7 @@ function isNumber(raw: unknown): raw is number {
 }
 
 function isStandard(raw: unknown): raw is StandardId {
-	return raw === 'aap-2022' || raw === 'nice-cg98';
+	return STANDARDS.has(raw);
 }
 
 function isFeeding(raw: unknown): raw is Feeding {

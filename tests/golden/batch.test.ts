@@ -356,7 +356,8 @@ describe('npm run assess', () => {
 
 	it('says what is wrong with the command or the file, and exits 2', async () => {
 		expect((await run(['--format', 'xml'], '')).code).toBe(2);
-		expect((await run(['no-such-file.ndjson'], '')).err).toMatch(/cannot be read/);
+		const missing = await run(['no-such-file.ndjson'], '');
+		expect(missing).toMatchObject({ code: 2, err: expect.stringMatching(/^The input cannot be read/) });
 		expect((await run(['--format', 'csv'], 'id,standard\n1,aap-2022\n')).err).toMatch(/header lacks/);
 		const endless = await run([], '['.padEnd(LONGEST_LINE_BYTES + 1, ' '));
 		expect(endless).toMatchObject({ code: 2, out: '', err: expect.stringMatching(/line 1 is longer than/) });

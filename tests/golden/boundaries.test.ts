@@ -122,9 +122,26 @@ describe('AAP 2022 transcutaneous values', () => {
 	});
 });
 
+describe('a skin value that asked for serum', () => {
+	it.each([
+		['aap-2022', value(48, 16, 'transcutaneous'), value(52, 10, 'transcutaneous'), value(50, 15)],
+		[
+			'nice-cg98',
+			value(96, 260, 'transcutaneous', 'umol/L'),
+			value(100, 200, 'transcutaneous', 'umol/L'),
+			value(98, 240, 'serum', 'umol/L')
+		]
+	] as const)('is not answered by a later skin value (%s)', (standard, asking, later, serum) => {
+		const alone = assessed({ standard, bilirubin: [asking, later] });
+		expect(alone.disposition).toBe('confirm-serum');
+		expect(alone.trace.at(-1)?.rule).toBe('confirm.unanswered');
+		expect(assessed({ standard, bilirubin: [asking, serum, later] }).disposition).not.toBe('confirm-serum');
+	});
+});
+
 describe('which value decides', () => {
-	it('is the latest, and serum of two at one instant', () => {
-		const result = assessed({ bilirubin: [value(48, 9), value(48, 10, 'transcutaneous'), value(30, 8)] });
+	it('is the latest, in whatever order they are given', () => {
+		const result = assessed({ bilirubin: [value(48, 9), value(40, 10, 'transcutaneous'), value(30, 8)] });
 		expect(result.decidingIndex).toBe(0);
 		expect(
 			result.trace.some(({ rule, confidence }) => rule === 'deciding-value' && confidence === 'our reading')
@@ -167,11 +184,16 @@ describe('from when a window counts', () => {
 		]);
 	});
 
-	it('counts anew where the visit would have been over before the measurement', () => {
-		const result = assessed({ dischargeAt: at(40), bilirubin: [value(90, 15)] });
-		expect(result.difference).toBe(6.4);
-		expect(windowHours(result)).toEqual([90, 138, 'judgement']);
-		expect(result.trace.some(({ rule }) => rule === 'window.new-count')).toBe(true);
+	it('counts anew where counting from discharge would leave the visit less than 4 hours', () => {
+		const visit = (hours: number, total: number) => {
+			const result = assessed({ dischargeAt: at(40), bilirubin: [value(hours, total)] });
+			return [windowHours(result), result.trace.some(({ rule }) => rule === 'window.new-count')];
+		};
+		// Differences 6.1 and 6.2 (2 days); 11.3 and 11.4 (3 days).
+		expect(visit(84, 14.7)).toEqual([[40, 88, 'judgement'], false]);
+		expect(visit(84.1, 14.7)).toEqual([[84.1, 112, 'judgement'], true]);
+		expect(visit(108, 10)).toEqual([[40, 112, 'judgement'], false]);
+		expect(visit(108.1, 10)).toEqual([[108.1, 180.1, 'judgement'], true]);
 	});
 
 	it('measures at 24 to 48 hours of age after a value before 12 hours', () => {
@@ -218,6 +240,45 @@ describe('after phototherapy (AAP 2022)', () => {
 		expect(windowHours(second)?.[2]).toBe('judgement');
 	});
 
+	it('asks for a test of its own for each that is owed', () => {
+		const phototherapy = [treated(40, 60, 'birth-stay')];
+		const owed = (...hours: number[]) => {
+			const bilirubin = [value(59, 9), ...hours.map((one) => value(one, 9))];
+			const result = assessed({ phototherapy, dischargeAt: at(75), bilirubin });
+			return [result.trace.at(-1)?.rule, windowHours(result)];
+		};
+		expect(owed(65.9)).toEqual(['after.soon', [66, 72, 'serum']]);
+		expect(owed(72)).toEqual(['after.next-day', [72, 84, 'serum']]);
+		expect(owed(73)).toEqual(['after.next-day', [73, 84, 'serum']]);
+		// Taken late: 6 hours apart at least.
+		expect(owed(80)).toEqual(['after.next-day', [80, 86, 'serum']]);
+		expect(owed(67, 72)[0]).toBe('figure-7.judgement');
+		// When the next day is over too, one value has shown what both would have shown.
+		expect(owed(84)[0]).toBe('figure-7.judgement');
+	});
+
+	it('takes a rapid rise for suspected hemolysis', () => {
+		const phototherapy = [treated(50, 60, 'birth-stay')];
+		const from = (first: number) =>
+			windowHours(
+				assessed({ phototherapy, dischargeAt: at(65), bilirubin: [value(40, first), value(50, 18)] })
+			);
+		// 0.2 mg/dL an hour suggests hemolysis (key action statements), 0.19 does not.
+		expect(from(16)).toEqual([66, 72, 'serum']);
+		expect(from(16.1)).toEqual([72, 84, 'serum']);
+	});
+
+	it('says that a course is missing where only its risk factor is listed', () => {
+		const jaundiceRisks = ['phototherapy-before-discharge' as const];
+		expect(codes(assessed({ jaundiceRisks, bilirubin: [value(48, 9)] }))).toContain(
+			'phototherapy-course-missing'
+		);
+		const phototherapy = [treated(20, 30, 'birth-stay')];
+		expect(codes(assessed({ jaundiceRisks, phototherapy, bilirubin: [value(48, 9)] }))).not.toContain(
+			'phototherapy-course-missing'
+		);
+	});
+
 	it('stays in treatment while it runs, and admits the option to stop 2 mg/dL below the starting line', () => {
 		const phototherapy = [{ from: at(48), setting: 'birth-stay' }] as const;
 		const found = (total: number) =>
@@ -232,6 +293,45 @@ describe('after phototherapy (AAP 2022)', () => {
 		const result = assessed({ phototherapy, bilirubin: [value(80, 17)] });
 		expect(result.disposition).toBe('phototherapy');
 		expect(windowHours(result)).toEqual([80, 104, 'serum']);
+	});
+
+	// Facts 2.5, one public copy: admit from 1 mg/dL over the line, or when serum rises and the gap narrows.
+	it.each([
+		['0.9 over the line (21.4), stays', [value(90, 22.3)], false],
+		['1.0 over the line, is admitted', [value(90, 22.4)], true],
+		['rising while the gap narrows, is admitted', [value(80, 17), value(90, 18.5)], true],
+		['rising while the gap widens, stays', [value(72, 17), value(90, 17.5)], false],
+		['falling, stays', [value(80, 18), value(90, 17.9)], false],
+		['over before it began, stays', [value(68, 20.6), value(90, 17)], false]
+	])('at home, %s', (_name, bilirubin, isAdmitted) => {
+		const phototherapy = [{ from: at(70), setting: 'home' }] as const;
+		const result = assessed({ phototherapy, bilirubin });
+		expect(result.disposition).toBe('phototherapy');
+		expect(codes(result).includes('admit-from-home')).toBe(isAdmitted);
+		expect(result.window === null).toBe(isAdmitted);
+	});
+
+	it('asks for serum now when the day at home is over and only skin values came', () => {
+		const phototherapy = [{ from: at(70), setting: 'home' }] as const;
+		const found = (hours: number) =>
+			assessed({ phototherapy, bilirubin: [value(80, 17), value(hours, 15, 'transcutaneous')] });
+		expect(windowHours(found(104))).toEqual([80, 104, 'serum']);
+		expect(found(104.1)).toMatchObject({ disposition: 'confirm-serum', window: null });
+	});
+
+	it('offers no stop against a skin value at a line of emergency, and asks for serum', () => {
+		const phototherapy = [{ from: at(70), setting: 'birth-stay' }] as const;
+		const found = (skin: number) =>
+			assessed({
+				phototherapy,
+				dischargeAt: at(120),
+				bilirubin: [value(80, 17), value(95, skin, 'transcutaneous')]
+			});
+		expect(codes(found(8))).toContain('may-stop-phototherapy');
+		expect(codes(found(8))).not.toContain('transcutaneous-very-high');
+		expect(codes(found(27))).toContain('transcutaneous-very-high');
+		expect(codes(found(27))).not.toContain('may-stop-phototherapy');
+		expect(found(27).trace.some(({ rule }) => rule === 'confirm.not-trusted')).toBe(true);
 	});
 
 	it('treats again when the line is reached after the end, or was still reached at the end', () => {
@@ -344,9 +444,10 @@ describe('what must not pass silently', () => {
 		['1 hour', { bilirubin: [value(1, 5)] }],
 		['336 hours', { bilirubin: [value(336, 5)] }],
 		[
-			'serum and transcutaneous at one instant',
-			{ bilirubin: [value(30, 5), value(30, 5, 'transcutaneous')] }
+			'serum and transcutaneous a minute apart',
+			{ bilirubin: [value(30, 5), value(30 + 1 / 60, 5, 'transcutaneous')] }
 		],
+		['the least total', { bilirubin: [value(30, 0.1)] }],
 		['direct equal to total', { bilirubin: [{ ...value(30, 5), direct: 5 }] }],
 		[
 			'two courses that touch',

@@ -1,3 +1,4 @@
+import type { z } from 'zod';
 import type { CheckOptions } from '../domain/guideline/check';
 import { assess } from '../domain/guideline/index';
 import type { Refusal } from '../domain/guideline/types';
@@ -51,11 +52,40 @@ function idOf(raw: unknown): string | null {
 	return typeof raw === 'object' && raw !== null && 'id' in raw && typeof raw.id === 'string' ? raw.id : null;
 }
 
-function refusalOf(issue: { code: string; path: readonly PropertyKey[]; message: string }): Refusal {
+type Issue = z.core.$ZodIssue;
+
+function refusalOf(issue: Issue): Refusal {
 	const field = issue.path.reduce<string>(
 		(text, key) =>
 			typeof key === 'number' ? `${text}[${key}]` : text === '' ? String(key) : `${text}.${String(key)}`,
 		''
 	);
-	return { code: 'unreadable', field, message: `${field || 'record'}: ${issue.message}` };
+	return { code: 'unreadable', field, message: whatToDo(issue) };
+}
+
+const SHAPES: Readonly<Record<string, string>> = {
+	string: 'text in quotes',
+	number: 'a number, without quotes or unit',
+	array: 'a list, [] when there is nothing in it',
+	object: 'an object of the published form'
+};
+
+/** What to do instead; the schema's own sentences say it already. */
+function whatToDo(issue: Issue): string {
+	switch (issue.code) {
+		case 'invalid_type': {
+			const isMissing = issue.message.endsWith('received undefined');
+			return `${isMissing ? 'This field is missing' : 'This cannot be read'}: give ${SHAPES[issue.expected] ?? issue.expected}.`;
+		}
+		case 'invalid_value':
+			return `Choose one of: ${issue.values.map(String).join(', ')}.`;
+		case 'unrecognized_keys':
+			return `The published form has no ${issue.keys.join(', ')}: leave it out, or correct its name.`;
+		case 'too_small':
+			return 'Give at least one letter.';
+		case 'too_big':
+			return `Give at most ${String(issue.maximum)} letters.`;
+		default:
+			return issue.message;
+	}
 }

@@ -2,6 +2,7 @@ import { z } from 'zod';
 import {
 	JAUNDICE_RISKS,
 	NEUROTOXICITY_RISKS,
+	STANDARD_IDS,
 	type Assessment,
 	type AssessmentInput,
 	type Refusal
@@ -10,7 +11,6 @@ import { INSTANT, parseInstant } from './instant';
 
 /** The published interface of an assessment, in and out. Others build on these names: add, never rename. */
 
-export const STANDARD_IDS = ['aap-2022', 'nice-cg98'] as const;
 export const UNITS = ['mg/dL', 'umol/L'] as const;
 export const METHODS = ['serum', 'transcutaneous'] as const;
 export const FEEDINGS = ['breast', 'formula', 'mixed'] as const;

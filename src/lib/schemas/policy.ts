@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import type { SitePolicy } from '../domain/followup/policy';
+import { STANDARD_IDS } from '../domain/guideline/types';
 
 const hours = (most: number) =>
 	z.number('Type a number.').min(0.25, 'At least a quarter of an hour.').max(most, `At most ${most} hours.`);
@@ -75,5 +76,5 @@ export function policyOfForm(form: PolicyForm): SitePolicy {
 }
 
 export const standardSchema = z.object({
-	standard: z.enum(['aap-2022', 'nice-cg98'], 'Choose a guideline.')
+	standard: z.enum(STANDARD_IDS, 'Choose a guideline.')
 });

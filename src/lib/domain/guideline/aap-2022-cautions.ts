@@ -1,8 +1,10 @@
 import { DAY_MS, HOUR_MS } from './age';
-import { FIRST_HOUR, LAST_HOUR, lines } from './aap-2022-lines';
+import { stopLevel } from './aap-2022-treatment';
 import * as edition from './editions/aap-2022';
-import { lastWhere, type Decision } from './standard';
-import type { Caution } from './types';
+import type { Decision } from './standard';
+import { showedStopLevel } from './stopping';
+import type { Caution, Measurement } from './types';
+import { valueIn } from './units';
 
 const CAUTIONS = {
 	options: {
@@ -65,6 +67,18 @@ const CAUTIONS = {
 		text: 'Before stopping, serum was not shown to be at least 2 mg/dL below the line that applied when phototherapy began: rebound is likelier.',
 		source: 'AAP 2022; Pediatrics 2019;144(1):e20183712'
 	},
+	admit: {
+		code: 'admit-from-home',
+		severity: 'danger',
+		text: 'Under phototherapy at home serum rises while its gap to the line narrows, or is 1 mg/dL or more over the line: admit for phototherapy in hospital, without waiting for the next daily value.',
+		source: 'AAP 2022, home phototherapy (one public copy)'
+	},
+	conjugated: {
+		code: 'conjugated-or-direct',
+		severity: 'warning',
+		text: 'From 0.3 mg/dL a conjugated bilirubin is abnormal, a direct one only from 1.0: ask the laboratory which of the two it reports. If conjugated, this asks about the liver: prompt referral.',
+		source: 'AAP 2022, from memory'
+	},
 	'may-stop': {
 		code: 'may-stop-phototherapy',
 		severity: 'notice',
@@ -76,12 +90,6 @@ const CAUTIONS = {
 		severity: 'notice',
 		text: 'Rebound after stopping is likelier before 38 weeks (10.2 % against 2.5 % when stopped 2 mg/dL below the starting line).',
 		source: 'Chang and Newman, Pediatrics 2019;144(1):e20183712'
-	},
-	'earlier-unconfirmed': {
-		code: 'earlier-transcutaneous-not-confirmed',
-		severity: 'warning',
-		text: 'An earlier transcutaneous value asked for a serum value, and none followed.',
-		source: 'AAP 2022 key action statements'
 	}
 } as const satisfies Record<string, Caution>;
 
@@ -106,8 +114,14 @@ export function cautionAap(decision: Made, cautions: Caution[]): void {
 		cautions.push(CAUTIONS['measure-again']);
 	}
 	if (known.treatment.last) cautionTreatment(decision, cautions);
-	if (decision.readings.length > 1 && hasUnconfirmed(decision))
-		cautions.push(CAUTIONS['earlier-unconfirmed']);
+	if (known.input.bilirubin.some(isPerhapsConjugated)) cautions.push(CAUTIONS.conjugated);
+}
+
+/** Abnormal if it is a conjugated value, normal if it is a direct one. */
+function isPerhapsConjugated({ direct, unit }: Measurement): boolean {
+	if (direct === undefined) return false;
+	const tenths = Math.round(valueIn(direct, unit, 'mg/dL') * 10);
+	return tenths >= edition.CONJUGATED_FROM_TENTHS && tenths < edition.DIRECT_FROM_TENTHS;
 }
 
 /** The study took newborns without treatment in the birth stay and their last value before discharge. */
@@ -159,40 +173,11 @@ function ratioReached({ deciding, case: known }: Made): boolean {
 	return albuminRatioReached({ total: deciding.total, albumin, weeks: known.weeks, atRisk: known.atRisk });
 }
 
-function cautionTreatment({ readings, case: known }: Made, cautions: Caution[]): void {
-	const { last, running, stopMs } = known.treatment;
-	const startMs = last?.from.getTime() ?? NaN;
-	const untilMs = running ? Infinity : stopMs;
-	const serum = lastWhere(readings, (one) => one.serum && one.atMs > startMs && one.atMs <= untilMs);
-	const isLow = serum !== undefined && isBelowStopLimit(serum.total, known, startMs);
-	if (running && isLow) cautions.push(CAUTIONS['may-stop']);
+function cautionTreatment({ readings, outcome, case: known }: Made, cautions: Caution[]): void {
+	const { running } = known.treatment;
+	const isLow = showedStopLevel(readings, known, { stopLevel });
+	if (outcome.rule === 'treatment.home-admit') cautions.push(CAUTIONS.admit);
+	else if (running && isLow) cautions.push(CAUTIONS['may-stop']);
 	if (!running && !isLow) cautions.push(CAUTIONS['stopped-early']);
 	if (!running && known.weeks < 38) cautions.push(CAUTIONS.rebound);
-}
-
-function isBelowStopLimit(total: number, known: Made['case'], startMs: number): boolean {
-	const level = stopLevel(known.weeks, known.atRisk, startMs - known.bornMs);
-	return level !== null && Math.round((level - total) * 10) >= 0;
-}
-
-/**
- * The value in mg/dL at or below which stopping is an option: 2 mg/dL under the line that applied when
- * phototherapy began. Null when it began outside the table.
- */
-export function stopLevel(weeks: number, atRisk: boolean, startAgeMs: number): number | null {
-	if (!(startAgeMs >= FIRST_HOUR * HOUR_MS && startAgeMs <= LAST_HOUR * HOUR_MS)) return null;
-	const line = lines(weeks, atRisk, startAgeMs).phototherapy;
-	return Math.round(line * 10 - edition.STOP_BELOW_START_LINE_TENTHS) / 10;
-}
-
-function hasUnconfirmed({ readings, outcome }: Made): boolean {
-	if (outcome.disposition === 'confirm-serum') return false;
-	const lastSerum = lastWhere(readings, (one) => one.serum);
-	return readings.some(
-		(one, i) =>
-			one.confirm !== null &&
-			one.distrust === null &&
-			i < readings.length - 1 &&
-			(lastSerum === undefined || one.atMs > lastSerum.atMs)
-	);
 }

@@ -1,8 +1,8 @@
 import * as edition from './editions/aap-2022';
 import { cautionAap } from './aap-2022-cautions';
-import { DAY_MS, HOUR_MS } from './age';
+import { HOUR_MS } from './age';
 import { exchangeCurve, FIRST_HOUR, LAST_HOUR, lines, photoCurve } from './aap-2022-lines';
-import { afterTreatment, underTreatment } from './aap-2022-treatment';
+import { afterTreatment, rateLimit, stopLevel, underTreatment } from './aap-2022-treatment';
 import {
 	lastWhere,
 	plain,
@@ -65,20 +65,33 @@ function follow(reading: Reading, _readings: readonly Reading[], known: Case): O
 		const { rule, fromHours, untilHours } = edition.DELAY;
 		return windowFrom(reading.atMs, { fromHours, untilHours, test: 'serum', rule }, 'delay-discharge');
 	}
-	const isVisit = tenths >= edition.VISIT_FROM_TENTHS;
 	let outcome: Outcome;
-	if (!isVisit) outcome = windowFrom(reading.atMs, band, 'follow-up');
-	else if (known.dischargeMs - known.bornMs >= edition.VISIT_BEFORE_HOURS * HOUR_MS) {
-		outcome = plain('judgement', 'figure-7.judgement');
-	} else outcome = visit(reading, band, known);
+	if (tenths < edition.VISIT_FROM_TENTHS) outcome = windowFrom(reading.atMs, band, 'follow-up');
+	else if (known.dischargeMs - known.bornMs < edition.VISIT_BEFORE_HOURS * HOUR_MS) {
+		outcome = visit(reading, band, known);
+	} else outcome = plain('judgement', 'figure-7.judgement');
 	return serumSoonAfterTreatment(beforeFigure(outcome, reading, known), known);
 }
 
-function visit(reading: Reading, band: edition.Band, known: Case): Outcome {
+/** From when a visit counts: from discharge, unless that leaves next to nothing after a value taken later. */
+function visitAnchorMs(reading: Reading, band: edition.Band, known: Case): number {
 	const anchorMs = Math.min(known.dischargeMs, reading.atMs);
-	const isOver = anchorMs + 2 * DAY_MS <= reading.atMs;
-	const outcome = windowFrom(isOver ? reading.atMs : anchorMs, band, 'follow-up');
-	return { ...outcome, also: [isOver ? 'window.new-count' : 'window.visit-anchor'] };
+	const leftMs = anchorMs + band.untilHours * HOUR_MS - reading.atMs;
+	return leftMs >= edition.VISIT_LEAVES_HOURS * HOUR_MS ? anchorMs : reading.atMs;
+}
+
+function visit(reading: Reading, band: edition.Band, known: Case): Outcome {
+	const anchorMs = visitAnchorMs(reading, band, known);
+	const isNew = anchorMs > known.dischargeMs;
+	const outcome = windowFrom(anchorMs, band, 'follow-up');
+	// Of two bands counted from different instants, the closer one must not end later than the farther one.
+	const last = edition.BANDS[edition.BANDS.length - 1] ?? band;
+	const lastUntilMs = visitAnchorMs(reading, last, known) + last.untilHours * HOUR_MS;
+	return {
+		...outcome,
+		untilMs: Math.min(outcome.untilMs, lastUntilMs),
+		also: [isNew ? 'window.new-count' : 'window.visit-anchor']
+	};
 }
 
 /** A value before the follow-up figure starts is followed by one between 24 and 48 hours of age. */
@@ -88,11 +101,11 @@ function beforeFigure(outcome: Outcome, reading: Reading, known: Case): Outcome 
 	if (outcome.untilMs <= untilMs) return outcome;
 	return {
 		disposition: 'follow-up',
-		rule: outcome.rule,
+		rule: edition.EARLY.rule,
 		fromMs: known.bornMs + edition.EARLY.fromHours * HOUR_MS,
 		untilMs,
 		test: 'serum-or-transcutaneous',
-		also: [...outcome.also, edition.EARLY.rule]
+		also: [outcome.rule]
 	};
 }
 
@@ -148,19 +161,8 @@ export const aap2022: Standard = {
 	afterTreatment,
 	underTreatment,
 	caution: cautionAap,
-	rateLimit: (endAgeMs) =>
-		endAgeMs <= DAY_MS
-			? { perHour: edition.RATE.firstDay, inclusive: true, rule: 'rate.first-24-hours' }
-			: { perHour: edition.RATE.later, inclusive: true, rule: 'rate.later' },
-	prolonged: ({ feeding }) =>
-		edition.PROLONGED[feeding].map((days) => ({
-			days,
-			rule:
-				days > 14
-					? 'prolonged.breast'
-					: feeding === 'formula' || feeding === 'mixed'
-						? 'prolonged.formula'
-						: 'prolonged.colour'
-		})),
-	raisedDirect: { from: 1.0, inclusive: true, rule: 'direct.raised' }
+	rateLimit,
+	stopLevel,
+	prolonged: ({ feeding }) => edition.PROLONGED[feeding],
+	raisedDirect: { from: edition.DIRECT_FROM_TENTHS / 10, inclusive: true, rule: 'direct.raised' }
 };

@@ -1,9 +1,9 @@
 import { HOUR_MS } from './age';
-import { LOW_ALBUMIN_GRAMS_PER_DECILITRE } from './editions/aap-2022';
 import { isRaisedDirect, liverStatus } from './liver';
-import { exceedsLimit, risePerHour } from './rate';
-import type { Decision, Standard } from './standard';
-import type { Caution, JaundiceRisk } from './types';
+import { rapidRise } from './rate';
+import { LOW_ALBUMIN_GRAMS_PER_DECILITRE } from './risks';
+import type { Decision, Reading, Standard } from './standard';
+import type { Caution, JaundiceRisk, Measurement } from './types';
 import { valueIn } from './units';
 
 /** The texts are fixed, so that a batch can write them without making them anew; values stand in the trace. */
@@ -85,6 +85,24 @@ const SHARED = {
 		severity: 'warning',
 		text: 'The window ends before the planned discharge: measure again before the newborn goes home.',
 		source: 'our reading'
+	},
+	'course-missing': {
+		code: 'phototherapy-course-missing',
+		severity: 'danger',
+		text: 'Phototherapy before discharge is listed, but no course is entered. Enter when it began and ended: the tests owed after treatment are missing from this result.',
+		source: 'AAP 2022 and NICE CG98, after phototherapy'
+	},
+	'past-the-lines': {
+		code: 'past-the-lines',
+		severity: 'warning',
+		text: 'The latest value lies past the last published hour, so no line applies to it. A clinician decides; measure total and direct (or conjugated) bilirubin while jaundice lasts.',
+		source: 'The published figures of the standard in force end at this age'
+	},
+	'past-the-lines-high': {
+		code: 'past-the-lines-high',
+		severity: 'danger',
+		text: 'A value past the last published hour would reach the last published phototherapy line. No line is printed for this age, and the value asks for a clinician at once.',
+		source: 'our reading: the lines no longer change over their last hours'
 	},
 	'transcutaneous-very-high': {
 		code: 'transcutaneous-very-high',
@@ -169,28 +187,24 @@ export function cautionShared(
 		cautions.push(SHARED.unstable);
 	}
 	cautionOutcome(decision, cautions);
+	if (decision.outcome.rule === 'past-the-lines') cautionPastTheLines(decision, standard, cautions);
+	if (isCourseMissing(decision)) cautions.push(SHARED['course-missing']);
 	const liver = liverStatus(input, standard);
 	if (liver === 'due' || liver === 'overdue') cautions.push(SHARED['prolonged-due']);
 }
 
 function cautionValues(
-	{ readings }: Omit<Decision, 'cautions'>,
+	{ readings, case: known }: Omit<Decision, 'cautions'>,
 	standard: Standard,
 	cautions: Caution[]
 ): void {
 	let hasUntrusted = false;
 	let reachedExchange = false;
-	let isRaised = false;
-	let isOverHalf = false;
 	let isLow = false;
 	for (const { measurement, distrust, zone, serum, ageMs } of readings) {
 		if (distrust !== null) hasUntrusted = true;
 		if (serum && zone === 'exchange') reachedExchange = true;
 		if (measurement.unit === 'umol/L' && measurement.total < 30 && ageMs >= 12 * HOUR_MS) isLow = true;
-		if (measurement.direct === undefined) continue;
-		const direct = valueIn(measurement.direct, measurement.unit, standard.unit);
-		if (isRaisedDirect(direct, standard)) isRaised = true;
-		if (isRaisedDirect(direct, standard) && measurement.direct * 2 > measurement.total) isOverHalf = true;
 	}
 	if (hasUntrusted) cautions.push(SHARED['untrusted-value']);
 	if (isLow) cautions.push(SHARED['check-unit']);
@@ -198,46 +212,63 @@ function cautionValues(
 	if (rapid !== 'none')
 		cautions.push(SHARED[rapid === 'one-method' ? 'rapid-rise' : 'rapid-rise-two-methods']);
 	if (reachedExchange) cautions.push(SHARED['hearing-test']);
+	cautionDirect(known.input.bilirubin, standard, cautions);
+}
+
+/** The liver question is asked at any age, so of every value, also one past the lines. */
+function cautionDirect(bilirubin: readonly Measurement[], standard: Standard, cautions: Caution[]): void {
+	let isRaised = false;
+	let isOverHalf = false;
+	for (const { direct, total, unit } of bilirubin) {
+		if (direct === undefined || !isRaisedDirect(valueIn(direct, unit, standard.unit), standard)) continue;
+		isRaised = true;
+		if (direct * 2 > total) isOverHalf = true;
+	}
 	if (isRaised) cautions.push(SHARED['direct-raised']);
 	if (isOverHalf) cautions.push(SHARED['direct-over-half']);
 }
 
-/** Whether any trusted value rose too fast from the one before it, and whether both were taken by one method. */
-function rapidRise(
-	readings: Decision['readings'],
-	standard: Standard
-): 'none' | 'one-method' | 'two-methods' {
-	let before: Decision['readings'][number] | undefined;
-	let found: 'none' | 'two-methods' = 'none';
-	for (const reading of readings) {
-		if (reading.distrust !== null) continue;
-		if (
-			before &&
-			before.atMs < reading.atMs &&
-			exceedsLimit(risePerHour(before, reading), reading.ageMs, standard)
-		) {
-			if (before.serum === reading.serum) return 'one-method';
-			found = 'two-methods';
-		}
-		before = reading;
-	}
-	return found;
+function cautionPastTheLines(
+	{ case: known }: Omit<Decision, 'cautions'>,
+	standard: Standard,
+	cautions: Caution[]
+): void {
+	const { lastAgeMs } = standard.coverage;
+	const last = standard.lines(known.weeks, known.atRisk, lastAgeMs);
+	const isHigh = known.input.bilirubin.some(
+		({ at, total, unit }) =>
+			at.getTime() - known.bornMs > lastAgeMs &&
+			standard.weigh(valueIn(total, unit, standard.unit), last).atLine
+	);
+	cautions.push(SHARED['past-the-lines']);
+	if (isHigh) cautions.push(SHARED['past-the-lines-high']);
+}
+
+function isCourseMissing({ case: { input, treatment } }: Omit<Decision, 'cautions'>): boolean {
+	return (
+		input.jaundiceRisks.includes('phototherapy-before-discharge') &&
+		!treatment.courses.some(({ setting }) => setting === 'birth-stay')
+	);
 }
 
 function cautionOutcome(
-	{ outcome, deciding, case: known }: Omit<Decision, 'cautions'>,
+	{ outcome, deciding, readings, case: known }: Omit<Decision, 'cautions'>,
 	cautions: Caution[]
 ): void {
-	if (
-		outcome.disposition === 'confirm-serum' &&
-		deciding &&
-		deciding.zone !== 'below' &&
-		deciding.zone !== 'phototherapy'
-	) {
-		cautions.push(SHARED['transcutaneous-very-high']);
-	}
+	if (hasVeryHighSkinValue(deciding, readings)) cautions.push(SHARED['transcutaneous-very-high']);
 	const isPlanned = deciding !== null && deciding.atMs <= known.dischargeMs;
 	if (isPlanned && outcome.disposition === 'follow-up' && outcome.untilMs <= known.dischargeMs) {
 		cautions.push(SHARED['window-before-discharge']);
 	}
+}
+
+/** A transcutaneous value at an emergency line that no serum value has answered. */
+function hasVeryHighSkinValue(deciding: Reading | null, readings: readonly Reading[]): boolean {
+	if (deciding === null) return false;
+	for (let i = readings.length - 1; i >= 0; i--) {
+		const reading = readings[i];
+		if (!reading || reading.serum) return false;
+		if (reading.zone === 'escalate' || reading.zone === 'exchange') return true;
+	}
+	return false;
 }

@@ -6,6 +6,7 @@ import { valueIn } from './units';
 /** Plausible limits of any newborn, wider than a standard's coverage; ours, to catch slips of the pen. */
 export const PLAUSIBLE = {
 	lastWeek: 44,
+	lowestMilligramsPerDecilitre: 0.1,
 	highestMilligramsPerDecilitre: 60,
 	albuminFrom: 0.5,
 	albuminUntil: 7,
@@ -19,6 +20,8 @@ const BORN_FROM_MS = Date.UTC(PLAUSIBLE.bornFromYear, 0, 1);
 /** The latest instant that may have happened; absent, the future is not looked at. */
 export interface CheckOptions {
 	readonly notAfter?: Date;
+	/** Lets values through that are older than the standard's last published age; `decide` holds them against no line. */
+	readonly pastTheLines?: boolean;
 }
 
 /** Everything that keeps an input from being assessed, each with its field and what to do; empty when nothing does. */
@@ -33,7 +36,8 @@ export function check(
 	checkGestationalAge(input, standard, refusals);
 	checkBirth(input, notAfterMs, refusals);
 	if (!Number.isNaN(bornMs)) {
-		const context = { bornMs, notAfterMs, standard, refusals };
+		const lastAgeMs = options.pastTheLines ? Infinity : standard.coverage.lastAgeMs;
+		const context = { bornMs, notAfterMs, lastAgeMs, standard, refusals };
 		for (let i = 0; i < input.bilirubin.length; i++) {
 			const measurement = input.bilirubin[i];
 			if (measurement) checkMeasurement(measurement, i, context);
@@ -133,6 +137,7 @@ function checkBirth(input: AssessmentInput, notAfterMs: number, refusals: Refusa
 interface MeasurementContext {
 	readonly bornMs: number;
 	readonly notAfterMs: number;
+	readonly lastAgeMs: number;
 	readonly standard: Standard;
 	readonly refusals: Refusal[];
 }
@@ -143,11 +148,10 @@ function checkMeasurement(measurement: Measurement, index: number, context: Meas
 }
 
 function checkInstant(measurement: Measurement, index: number, context: MeasurementContext): void {
-	const { bornMs, notAfterMs, standard, refusals } = context;
+	const { bornMs, notAfterMs, lastAgeMs, standard, refusals } = context;
 	const atMs = measurement.at.getTime();
 	const ageMs = atMs - bornMs;
-	if (ageMs >= standard.coverage.firstAgeMs && ageMs <= standard.coverage.lastAgeMs && atMs <= notAfterMs)
-		return;
+	if (ageMs >= standard.coverage.firstAgeMs && ageMs <= lastAgeMs && atMs <= notAfterMs) return;
 	const field = `bilirubin[${index}].at`;
 	if (Number.isNaN(atMs))
 		refuse(refusals, 'instant-unreadable', field, 'Give date and time of sampling with the offset from UTC.');
@@ -171,13 +175,14 @@ function checkInstant(measurement: Measurement, index: number, context: Measurem
 }
 
 function checkValue({ total, direct, unit }: Measurement, index: number, refusals: Refusal[]): void {
-	const highest = PLAUSIBLE.highestMilligramsPerDecilitre;
-	if (!(total > 0 && valueIn(total, unit, 'mg/dL') <= highest)) {
+	const { lowestMilligramsPerDecilitre: lowest, highestMilligramsPerDecilitre: highest } = PLAUSIBLE;
+	const milligrams = valueIn(total, unit, 'mg/dL');
+	if (!(milligrams >= lowest && milligrams <= highest)) {
 		refuse(
 			refusals,
 			'total-implausible',
 			`bilirubin[${index}].total`,
-			`Total bilirubin must be above 0 and at most ${highest} mg/dL (${Math.round(highest * 17.1)} µmol/L). Check the value and its unit.`
+			`Total bilirubin must be from ${lowest} to ${highest} mg/dL (${Math.ceil(lowest * 17.1)} to ${Math.round(highest * 17.1)} µmol/L). Check the value and its unit.`
 		);
 	}
 	if (direct === undefined) return;
@@ -212,12 +217,12 @@ function checkTogether(bilirubin: readonly Measurement[], refusals: Refusal[]): 
 		const later = bilirubin[i];
 		for (let k = 0; later && k < i; k++) {
 			const other = bilirubin[k];
-			if (other?.method !== later.method || other.at.getTime() !== later.at.getTime()) continue;
+			if (other?.at.getTime() !== later.at.getTime()) continue;
 			refuse(
 				refusals,
 				'two-values-at-one-instant',
 				`bilirubin[${i}].at`,
-				`Two ${later.method} values at one instant (also bilirubin[${k}]). Keep the right one, or correct a time.`
+				`Two values at one instant (also bilirubin[${k}]). Keep the right one, or give each its own minute: the later one decides.`
 			);
 		}
 		if (later && later.unit !== bilirubin[0]?.unit) {

@@ -1,9 +1,9 @@
 import { err, ok, type Result } from '../result';
 import { HOUR_MS } from './age';
 import { checkGestationalAge } from './check';
-import { LOW_ALBUMIN_GRAMS_PER_DECILITRE } from './editions/aap-2022';
 import { thresholdsOf } from './explain';
 import { standardOf } from './registry';
+import { LOW_ALBUMIN_GRAMS_PER_DECILITRE } from './risks';
 import type { AssessmentInput, BilirubinUnit, CurvePoint, Refusal, StandardId, Thresholds } from './types';
 
 type LineRequest = Pick<

@@ -1,6 +1,7 @@
 import { cautionShared } from './cautions';
-import { LOW_ALBUMIN_GRAMS_PER_DECILITRE } from './editions/aap-2022';
+import { LOW_ALBUMIN_GRAMS_PER_DECILITRE } from './risks';
 import {
+	lastWhere,
 	plain,
 	type Case,
 	type Decision,
@@ -12,6 +13,7 @@ import {
 import type { AssessmentInput, Caution, Measurement, PhototherapyCourse } from './types';
 import { valueIn } from './units';
 
+const PAST_THE_LINES: Outcome = plain('judgement', 'past-the-lines');
 const NO_READINGS: readonly Reading[] = [];
 const NO_COURSE: Treatment = { courses: [], last: null, running: false, stopMs: NaN };
 
@@ -22,8 +24,9 @@ const NO_COURSE: Treatment = { courses: [], last: null, running: false, stopMs: 
 export function decide(input: AssessmentInput, standard: Standard): Decision {
 	const known = caseOf(input);
 	const readings = read(known, standard);
-	const deciding = decidingOf(readings);
-	const outcome = outcomeOf(deciding, readings, known, standard);
+	const isPastTheLines = readings.length < input.bilirubin.length;
+	const deciding = isPastTheLines ? null : decidingOf(readings);
+	const outcome = isPastTheLines ? PAST_THE_LINES : outcomeOf(deciding, readings, known, standard);
 	const cautions: Caution[] = [];
 	const decision: Decision = { case: known, readings, deciding, outcome, cautions };
 	standard.caution(decision, cautions);
@@ -54,9 +57,8 @@ function treatmentOf(given: readonly PhototherapyCourse[]): Treatment {
 	return { courses, last, running: last?.to === undefined, stopMs: last?.to?.getTime() ?? NaN };
 }
 
-/** In order of time; of two at one instant the serum value comes last and so is preferred. */
 function inOrder(a: Reading, b: Reading): number {
-	return a.atMs - b.atMs || (a.serum ? 1 : -1);
+	return a.atMs - b.atMs;
 }
 
 /** Records mostly come in order, and looking is cheaper than sorting. */
@@ -69,12 +71,15 @@ function areInOrder(readings: readonly Reading[]): boolean {
 	return true;
 }
 
+/** A value past the last published age is held against no line; `check` refuses it unless asked to let it through. */
 function read(known: Case, standard: Standard): Reading[] {
 	const given = known.input.bilirubin;
+	const lastMs = known.bornMs + standard.coverage.lastAgeMs;
 	const readings: Reading[] = [];
 	for (let i = 0; i < given.length; i++) {
 		const measurement = given[i];
-		if (measurement) readings.push(readingOf(measurement, i, known, standard));
+		if (measurement && measurement.at.getTime() <= lastMs)
+			readings.push(readingOf(measurement, i, known, standard));
 	}
 	if (!areInOrder(readings)) readings.sort(inOrder);
 	for (let i = 0; i < readings.length; i++) {
@@ -127,16 +132,25 @@ function outcomeOf(
 ): Outcome {
 	if (!deciding) return plain('measure-first', 'measure-first');
 	const outcome = byValue(deciding, readings, known, standard);
-	const isTreatment =
-		outcome.disposition === 'exchange' ||
-		outcome.disposition === 'escalate' ||
-		outcome.disposition === 'phototherapy';
-	if (isTreatment || deciding === readings[readings.length - 1]) return outcome;
-	const hasWorryingLater = readings.some(
+	if (deciding === readings[readings.length - 1]) return outcome;
+	const worrying = readings.filter(
 		(one) => one.distrust !== null && one.confirm !== null && one.atMs >= deciding.atMs
 	);
-	return hasWorryingLater ? plain('confirm-serum', 'confirm.not-trusted') : outcome;
+	switch (outcome.disposition) {
+		case 'exchange':
+		case 'escalate':
+			return outcome;
+		case 'phototherapy':
+			// Under light a skin value near the line is expected; one at the lines of an emergency is not.
+			return worrying.some(isEmergency)
+				? plain('phototherapy', outcome.rule, [...outcome.also, 'confirm.not-trusted'])
+				: outcome;
+		default:
+			return worrying.length > 0 ? plain('confirm-serum', 'confirm.not-trusted') : outcome;
+	}
 }
+
+const isEmergency = ({ zone }: Reading): boolean => zone === 'escalate' || zone === 'exchange';
 
 function byValue(deciding: Reading, readings: readonly Reading[], known: Case, standard: Standard): Outcome {
 	const { treatment } = known;
@@ -145,6 +159,8 @@ function byValue(deciding: Reading, readings: readonly Reading[], known: Case, s
 	if (treatment.running) return standard.underTreatment(readings, known);
 	if (deciding.distrust !== null) return plain('confirm-serum', 'confirm.not-trusted', [deciding.distrust]);
 	if (deciding.confirm !== null) return plain('confirm-serum', deciding.confirm);
+	const asked = unanswered(deciding, readings, known);
+	if (asked !== null) return plain('confirm-serum', 'confirm.unanswered', [asked]);
 	if (treatment.last && deciding.atMs <= treatment.stopMs) {
 		if (deciding.zone !== 'below' && deciding.atMs > treatment.last.from.getTime()) {
 			return plain('phototherapy', 'zone.phototherapy', ['treatment.still-over']);
@@ -155,6 +171,22 @@ function byValue(deciding: Reading, readings: readonly Reading[], known: Case, s
 	const outcome = standard.follow(deciding, readings, known);
 	const owed = treatment.last ? standard.afterTreatment(readings, known) : null;
 	return owed ? earlier(outcome, owed) : outcome;
+}
+
+/** The rule by which an earlier skin value asked for serum, where none followed and no treatment was begun since. */
+function unanswered(deciding: Reading, readings: readonly Reading[], known: Case): string | null {
+	if (deciding.serum) return null;
+	const sinceMs = known.treatment.last?.from.getTime() ?? -Infinity;
+	const serum = lastWhere(readings, (one) => one.serum);
+	const asking = lastWhere(
+		readings,
+		(one) =>
+			one.confirm !== null &&
+			one.distrust === null &&
+			one.atMs > sinceMs &&
+			one.atMs > (serum?.atMs ?? -Infinity)
+	);
+	return asking?.confirm ?? null;
 }
 
 /** Of what the value asks for and what treatment still owes, the one that ends earlier. */

@@ -1,6 +1,7 @@
 import { formatGestationalAge, HOUR_MS, shownHours } from './age';
-import { liverFinding } from './liver';
+import { liverFinding, measuringCheck } from './liver';
 import { exceedsLimit, projectedCrossingAt, risePerHour } from './rate';
+import { SHARED_RULES } from './shared-rules';
 import type { Decision, Lines, Outcome, Reading, Rule, Standard } from './standard';
 import type {
 	Assessment,
@@ -110,7 +111,7 @@ export function rateOf(
 }
 
 function ruleOf(standard: Standard, id: string): Rule {
-	const rule = standard.rules[id];
+	const rule = standard.rules[id] ?? SHARED_RULES[id];
 	if (!rule) throw new Error(`${standard.id} has no rule ${id}`);
 	return rule;
 }
@@ -216,26 +217,20 @@ function rateStep(rate: RateOfRise, { decision, standard }: TraceContext): Trace
 	);
 }
 
-const DECIDING: Rule = {
-	says: 'The latest value that may be trusted decides; of two at one instant serum is preferred. Where none may be trusted, the latest can only ask for serum.',
-	source: 'Neither standard prints which of several values decides',
-	confidence: 'our reading'
-};
-
 function decidingStep(deciding: Reading, { standard }: TraceContext): TraceStep {
 	return step(
 		'deciding-value',
-		DECIDING,
+		ruleOf(standard, 'deciding-value'),
 		{ at: deciding.measurement.at.toISOString(), method: deciding.measurement.method },
 		`bilirubin[${deciding.index}] decides: difference ${deciding.difference} ${standard.unit}`
 	);
 }
 
 function liverStep({ decision, standard, directFraction }: TraceContext): TraceStep {
-	const checks = standard.prolonged(decision.case.input);
+	const { input } = decision.case;
 	const id =
-		directFraction.status === 'raised' ? standard.raisedDirect.rule : (checks[checks.length - 1]?.rule ?? '');
-	const { feeding, gestationalAge } = decision.case.input;
+		directFraction.status === 'raised' ? standard.raisedDirect.rule : measuringCheck(input, standard).rule;
+	const { feeding, gestationalAge } = input;
 	return step(
 		id,
 		ruleOf(standard, id),
@@ -244,8 +239,10 @@ function liverStep({ decision, standard, directFraction }: TraceContext): TraceS
 	);
 }
 
-function alsoStep(id: string, { standard, decision }: TraceContext): TraceStep {
-	return step(id, ruleOf(standard, id), timesOf(decision), 'taken into account');
+/** A rule that moved the result; with it, this is what follows. */
+function alsoStep(id: string, { standard, decision, window }: TraceContext): TraceStep {
+	const { disposition } = decision.outcome;
+	return step(id, ruleOf(standard, id), timesOf(decision), describeResult(disposition, window));
 }
 
 function timesOf({ case: known, deciding }: Decision): Record<string, string | number> {

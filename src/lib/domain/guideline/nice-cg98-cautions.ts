@@ -1,6 +1,8 @@
 import { HOUR_MS } from './age';
 import * as edition from './editions/nice-cg98';
-import { lastWhere, type Decision } from './standard';
+import { stopLevel } from './nice-cg98-lines';
+import type { Decision } from './standard';
+import { showedStopLevel } from './stopping';
 import type { Caution } from './types';
 
 const CAUTIONS = {
@@ -73,7 +75,8 @@ function cautionSerum({ deciding, case: known }: Made, cautions: Caution[]): voi
 		cautions.push(CAUTIONS.intensify);
 }
 
-function needsExtraLook({ deciding, case: known }: Made): boolean {
+function needsExtraLook({ deciding, outcome, case: known }: Made): boolean {
+	if (outcome.rule === 'past-the-lines') return false;
 	if (deciding && deciding.ageMs >= edition.EXTRA_LOOK_UNTIL_HOURS * HOUR_MS) return false;
 	const { feeding, jaundiceRisks } = known.input;
 	return (
@@ -85,13 +88,7 @@ function needsExtraLook({ deciding, case: known }: Made): boolean {
 }
 
 function cautionTreatment({ readings, case: known }: Made, cautions: Caution[]): void {
-	const { last, running, stopMs } = known.treatment;
-	const startMs = last?.from.getTime() ?? NaN;
-	const serum = lastWhere(
-		readings,
-		(one) => one.serum && one.atMs > startMs && (running || one.atMs <= stopMs)
-	);
-	const isLow = serum !== undefined && serum.difference >= edition.STOP_BELOW_LINE_MICROMOLES;
-	if (running && isLow) cautions.push(CAUTIONS.mayStop);
-	if (!running && !isLow) cautions.push(CAUTIONS.stoppedEarly);
+	const isLow = showedStopLevel(readings, known, { stopLevel });
+	if (known.treatment.running && isLow) cautions.push(CAUTIONS.mayStop);
+	if (!known.treatment.running && !isLow) cautions.push(CAUTIONS.stoppedEarly);
 }

@@ -1,7 +1,7 @@
-import { NICE_CG98_TABLE } from './editions/nice-cg98-table';
 import * as edition from './editions/nice-cg98';
 import { DAY_MS, HOUR_MS } from './age';
 import { cautionNice } from './nice-cg98-cautions';
+import { FIRST_WEEK, lines, rounded, rowOf, stopLevel } from './nice-cg98-lines';
 import {
 	lastWhere,
 	plain,
@@ -11,33 +11,11 @@ import {
 	type Reading,
 	type Standard
 } from './standard';
-import { decodePoints, valueAt, type Point } from './tables';
 import type { WindowTest } from './types';
 
-const FIRST_WEEK = 23;
-const CURVES: Readonly<Record<string, string>> = NICE_CG98_TABLE.curves;
-const PHOTO = pointsOf('photo');
-const EXCHANGE = pointsOf('exchange');
-
-function pointsOf(table: 'photo' | 'exchange'): readonly (readonly Point[])[] {
-	return Array.from({ length: 16 }, (_, i) => decodePoints(CURVES[`${table} ${FIRST_WEEK + i}`] ?? ''));
-}
-
-/** 38 means 38 weeks or more. */
-const rowOf = (weeks: number): number => Math.min(weeks, 38);
-const rounded = (value: number): number => Math.round(value * 10) / 10;
-
-function lines(weeks: number, _atRisk: boolean, ageMs: number): Lines {
-	const photo = PHOTO[rowOf(weeks) - FIRST_WEEK];
-	const exchange = EXCHANGE[rowOf(weeks) - FIRST_WEEK];
-	if (!photo || !exchange) throw new RangeError(`no line for ${weeks} weeks`);
-	const hours = ageMs / HOUR_MS;
-	return {
-		phototherapy: rounded(valueAt(photo, hours)),
-		escalation: NaN,
-		exchange: rounded(valueAt(exchange, hours))
-	};
-}
+const RATE_LIMIT = { perHour: edition.RATE_PER_HOUR, inclusive: false, rule: 'rate' };
+const TERM_CHECKS = [{ days: edition.PROLONGED.termDays, rule: 'prolonged.term', measures: true }];
+const PRETERM_CHECKS = [{ days: edition.PROLONGED.pretermDays, rule: 'prolonged.preterm', measures: true }];
 
 /** Differences to 0.1 µmol/L; "over" the line, so that a value equal to it is not treated. */
 function weigh(total: number, at: Lines): ReturnType<Standard['weigh']> {
@@ -144,10 +122,9 @@ export const niceCg98: Standard = {
 	afterTreatment,
 	underTreatment: () => plain('phototherapy', 'treatment.running'),
 	caution: cautionNice,
-	rateLimit: () => ({ perHour: edition.RATE_PER_HOUR, inclusive: false, rule: 'rate' }),
+	stopLevel,
+	rateLimit: () => RATE_LIMIT,
 	prolonged: ({ gestationalAge }) =>
-		gestationalAge.weeks >= edition.PROLONGED.termFromWeek
-			? [{ days: edition.PROLONGED.termDays, rule: 'prolonged.term' }]
-			: [{ days: edition.PROLONGED.pretermDays, rule: 'prolonged.preterm' }],
+		gestationalAge.weeks >= edition.PROLONGED.termFromWeek ? TERM_CHECKS : PRETERM_CHECKS,
 	raisedDirect: { from: edition.RAISED_CONJUGATED_MICROMOLES, inclusive: false, rule: 'direct.raised' }
 };

@@ -2,6 +2,7 @@ import { HOUR_MS } from './age';
 import type { Reading, Standard } from './standard';
 
 type Weighed = Pick<Reading, 'atMs' | 'total'>;
+type Limited = Pick<Standard, 'rateLimit'>;
 
 /** Change an hour between two values of one unit, earlier first; negative when falling. */
 export function risePerHour(earlier: Weighed, later: Weighed): number {
@@ -9,9 +10,30 @@ export function risePerHour(earlier: Weighed, later: Weighed): number {
 }
 
 /** Whether a rise reaches (AAP) or passes (NICE) the published limit for a pair ending at this age. */
-export function exceedsLimit(perHour: number, endAgeMs: number, standard: Standard): boolean {
+export function exceedsLimit(perHour: number, endAgeMs: number, standard: Limited): boolean {
 	const limit = standard.rateLimit(endAgeMs);
 	return limit.inclusive ? perHour >= limit.perHour - 1e-9 : perHour > limit.perHour + 1e-9;
+}
+
+export type RapidRise = 'none' | 'one-method' | 'two-methods';
+
+/** Whether any trusted value rose too fast from the one before it, and whether both were taken by one method. */
+export function rapidRise(readings: readonly Reading[], standard: Limited): RapidRise {
+	let before: Reading | undefined;
+	let found: RapidRise = 'none';
+	for (const reading of readings) {
+		if (reading.distrust !== null) continue;
+		if (
+			before &&
+			before.atMs < reading.atMs &&
+			exceedsLimit(risePerHour(before, reading), reading.ageMs, standard)
+		) {
+			if (before.serum === reading.serum) return 'one-method';
+			found = 'two-methods';
+		}
+		before = reading;
+	}
+	return found;
 }
 
 /**

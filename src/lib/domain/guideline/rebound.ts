@@ -1,5 +1,3 @@
-import { stopLevel } from './aap-2022-cautions';
-import { STOP_BELOW_LINE_MICROMOLES } from './editions/nice-cg98';
 import { DAY_MS } from './age';
 import { standardOf } from './registry';
 import type { Bilirubin, NeurotoxicityRisk, StandardId } from './types';
@@ -23,16 +21,13 @@ export function phototherapyStopLevel(request: StopRequest): Bilirubin | null {
 	const { standard: id, weeks, neurotoxicityRisks, bornAt, startedAt, at } = request;
 	const standard = standardOf(id);
 	if (weeks < standard.coverage.firstWeek) return null;
-	if (id === 'aap-2022') {
-		const value = stopLevel(weeks, neurotoxicityRisks.length > 0, startedAt.getTime() - bornAt.getTime());
-		return value === null ? null : { value, unit: 'mg/dL' };
-	}
-	const ageMs = at.getTime() - bornAt.getTime();
-	if (!(ageMs >= standard.coverage.firstAgeMs && ageMs <= standard.coverage.lastAgeMs)) return null;
-	return {
-		value: standard.lines(weeks, false, ageMs).phototherapy - STOP_BELOW_LINE_MICROMOLES,
-		unit: 'umol/L'
-	};
+	const value = standard.stopLevel({
+		weeks,
+		atRisk: neurotoxicityRisks.length > 0,
+		startAgeMs: startedAt.getTime() - bornAt.getTime(),
+		ageMs: at.getTime() - bornAt.getTime()
+	});
+	return value === null ? null : { value, unit: standard.unit };
 }
 
 export interface ReboundScore {

@@ -10,6 +10,9 @@ export interface RiskDefinition {
 const NEUROTOXICITY = 'AAP 2022, neurotoxicity risk factors (four public copies)';
 const JAUNDICE = 'AAP 2022, risk factors for significant hyperbilirubinemia';
 
+/** Below it albumin is low, listed as a risk or not: AAP 2022, neurotoxicity risk factors (four public copies). */
+export const LOW_ALBUMIN_GRAMS_PER_DECILITRE = 3.0;
+
 /** Risk factors that choose the lower lines (AAP). Below 38 weeks is one too, but the lines already carry it. */
 export const NEUROTOXICITY_RISK_DEFINITIONS: Readonly<Record<NeurotoxicityRisk, RiskDefinition>> = {
 	'isoimmune-hemolysis': {

@@ -98,6 +98,21 @@ export interface Coverage {
 	readonly afterLastAge: string;
 }
 
+/** Ages in milliseconds: when phototherapy began, and the one asked about. */
+export interface StopAsked {
+	readonly weeks: number;
+	readonly atRisk: boolean;
+	readonly startAgeMs: number;
+	readonly ageMs: number;
+}
+
+/** An age at which persisting jaundice is asked about: for colour of stool and urine, or for a measurement too. */
+export interface ProlongedCheck {
+	readonly days: number;
+	readonly rule: string;
+	readonly measures: boolean;
+}
+
 /** A standard: one module of this shape and one data file. Add it to `registry.ts`. */
 export interface Standard {
 	readonly id: StandardId;
@@ -125,12 +140,12 @@ export interface Standard {
 	underTreatment(readings: readonly Reading[], known: Case): Outcome;
 	/** Adds what the clinician should see beside the result. */
 	caution(decision: Omit<Decision, 'cautions'>, cautions: Caution[]): void;
+	/** The total at or below which stopping phototherapy is an option, in the standard's unit; null outside what is printed. */
+	stopLevel(asked: StopAsked): number | null;
 	/** Limit of the rate of rise per hour for a pair ending at this age, in the standard's unit. */
 	rateLimit(endAgeMs: number): { perHour: number; inclusive: boolean; rule: string };
 	/** Ages in days at which persisting jaundice is asked about. */
-	prolonged(
-		input: Pick<AssessmentInput, 'gestationalAge' | 'feeding'>
-	): readonly { days: number; rule: string }[];
+	prolonged(input: Pick<AssessmentInput, 'gestationalAge' | 'feeding'>): readonly ProlongedCheck[];
 	/** Direct or conjugated fraction from which the liver question is open, in the standard's unit. */
 	readonly raisedDirect: { from: number; inclusive: boolean; rule: string };
 }

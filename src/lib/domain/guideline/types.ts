@@ -1,6 +1,7 @@
 /** The vocabulary of the guideline engine. Names in `AssessmentInput` and `Disposition` are a published interface. */
 
-export type StandardId = 'aap-2022' | 'nice-cg98';
+export const STANDARD_IDS = ['aap-2022', 'nice-cg98'] as const;
+export type StandardId = (typeof STANDARD_IDS)[number];
 export type BilirubinUnit = 'mg/dL' | 'umol/L';
 export type Method = 'serum' | 'transcutaneous';
 export type Feeding = 'breast' | 'formula' | 'mixed';
@@ -78,7 +79,10 @@ export interface AssessmentInput {
 	readonly albuminGramsPerDecilitre?: number;
 	readonly bilirubin: readonly Measurement[];
 	readonly phototherapy: readonly PhototherapyCourse[];
-	/** The instant of asking. Given, values in the future are refused and prolonged-jaundice rules apply; absent, they do not. */
+	/**
+	 * The instant of asking. Given, values in the future are refused; absent, the question of prolonged jaundice is asked
+	 * as of the latest measurement.
+	 */
 	readonly now?: Date;
 }
 

@@ -1,7 +1,7 @@
 import type { StaffActor } from '../../domain/access/roles';
 import type { SitePolicy } from '../../domain/followup/policy';
 import { standardOf } from '../../domain/guideline/registry';
-import type { StandardId } from '../../domain/guideline/types';
+import { STANDARD_IDS, type StandardId } from '../../domain/guideline/types';
 import { err, ok, type Result } from '../../domain/result';
 import { recordAccess } from '../audit/record';
 import type { Ctx } from '../context';
@@ -11,7 +11,6 @@ import { findOrganisation, findSite, listSites, lockSite, updateSite, updateStan
 import { listRoles, listStaff } from '../repos/staff';
 
 /** The standards an organisation can put in force. */
-export const STANDARD_IDS: readonly StandardId[] = ['aap-2022', 'nice-cg98'];
 
 export interface PolicyScreen {
 	readonly inForce: StandardId;

@@ -41,6 +41,8 @@ export const BANDS: readonly Band[] = [
 /** Bands from this one on ask for a visit, and only for a discharge before `VISIT_BEFORE_HOURS` of age. */
 export const VISIT_FROM_TENTHS = 55;
 export const VISIT_BEFORE_HOURS = 72;
+/** Our reading: where a visit counted from discharge leaves less than this after a later value, it counts from the value. */
+export const VISIT_LEAVES_HOURS = 4;
 /** The lowest band before 24 hours of age. */
 export const DELAY = { beforeHours: 24, fromHours: 4, untilHours: 8, rule: 'figure-7.delay' } as const;
 /** The follow-up figure starts at 12 hours; a value before it is followed by one between 24 and 48 hours of age. */
@@ -56,15 +58,25 @@ export const AFTER_TREATMENT = {
 	days: { fromHours: 24, untilHours: 48 },
 	startedBeforeHours: 48
 } as const;
+/** Direct bilirubin from which the liver question is open, and conjugated bilirubin that is abnormal (from memory). */
+export const DIRECT_FROM_TENTHS = 10;
+export const CONJUGATED_FROM_TENTHS = 3;
 export const HOME_DAILY_HOURS = 24;
-export const HOME = { fromWeek: 38, fromHours: 48, overLineTenths: 10 } as const;
+export const HOME = { fromWeek: 38, fromHours: 48, overLineTenths: 10, admitOverLineTenths: 10 } as const;
 /** Kuzniewicz et al., Pediatrics 2021;147(5):e2020019778: last value 0 to 1 mg/dL below the line. */
 export const CROSSING_WITHIN_TENTHS = 10;
 export const RATE = { firstDay: 0.3, later: 0.2 } as const;
 /** Bilirubin (mg/dL) to albumin (g/dL) ratio at which exchange may be considered. */
 export const ALBUMIN_RATIO = { termNoRisk: 8.0, termRisk: 7.2, earlyNoRisk: 7.2, earlyRisk: 6.8 } as const;
-export const LOW_ALBUMIN_GRAMS_PER_DECILITRE = 3.0;
-export const PROLONGED = { formula: [14], mixed: [14, 21], breast: [14, 21] } as const;
+const AT_TWO_WEEKS = { days: 14, rule: 'prolonged.formula', measures: true };
+const COLOUR_AT_TWO_WEEKS = { days: 14, rule: 'prolonged.colour', measures: false };
+const AT_THREE_WEEKS = { days: 21, rule: 'prolonged.breast', measures: true };
+/** By feeding; mixed feeding is read as the earlier of the two. */
+export const PROLONGED = {
+	formula: [AT_TWO_WEEKS],
+	mixed: [AT_TWO_WEEKS, AT_THREE_WEEKS],
+	breast: [COLOUR_AT_TWO_WEEKS, AT_THREE_WEEKS]
+} as const;
 
 export const TABLE_SOURCE = `${ARTICLE}, supplemental hour-by-hour tables`;
 
@@ -165,7 +177,7 @@ export const RULES = {
 		confidence: 'our reading'
 	},
 	'window.new-count': {
-		says: 'Counted from discharge the visit would have been over before this measurement, so it counts from the measurement.',
+		says: 'Counted from discharge, less than 4 hours would be left for the visit after this measurement, so it counts from the measurement.',
 		source: `${FIGURE_7}, left open`,
 		confidence: 'our reading'
 	},
@@ -194,6 +206,11 @@ export const RULES = {
 		source: `${ARTICLE}, home phototherapy`,
 		confidence: 'transcribed'
 	},
+	'treatment.home-admit': {
+		says: 'Phototherapy at home, and serum rises while its gap to the line narrows, or is 1 mg/dL or more over the line: admit for phototherapy in hospital.',
+		source: `${ARTICLE}, home phototherapy`,
+		confidence: 'transcribed'
+	},
 	'treatment.still-over': {
 		says: 'The last value, taken during the treatment that has ended, is still at or over the line.',
 		source: `Follows from ${STATEMENTS}`,
@@ -208,6 +225,11 @@ export const RULES = {
 		says: 'Treated in the birth stay (or treated again after it): bilirubin the day after phototherapy stopped. "The next day" is read as 12 to 24 hours after stopping, the earlier reading; until 24 hours the test is serum.',
 		source: `${ARTICLE}, after phototherapy; the hours are our reading`,
 		confidence: 'from memory'
+	},
+	'after.spaced': {
+		says: 'The first test after stopping was taken late, so the second is asked for within 6 hours of it.',
+		source: `${ARTICLE}, after phototherapy, left open`,
+		confidence: 'our reading'
 	},
 	'after.days': {
 		says: 'Readmitted without earlier treatment, or treated at home: bilirubin 1 to 2 days after phototherapy stopped, or a clinical visit in that time which decides on one.',
