@@ -15,5 +15,4 @@ ALTER TABLE `stray_texts` ADD CONSTRAINT `stray_texts_entry_id_thread_entries_id
 ALTER TABLE `stray_texts` ADD CONSTRAINT `stray_texts_organisation_id_organisations_id_fk` FOREIGN KEY (`organisation_id`) REFERENCES `organisations`(`id`) ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `stray_texts` ADD CONSTRAINT `stray_texts_settled_by_staff_id_fk` FOREIGN KEY (`settled_by`) REFERENCES `staff`(`id`) ON DELETE no action ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE `stray_texts` ADD CONSTRAINT `stray_texts_follow_up_id_follow_ups_id_fk` FOREIGN KEY (`follow_up_id`) REFERENCES `follow_ups`(`id`) ON DELETE no action ON UPDATE no action;--> statement-breakpoint
-CREATE INDEX `stray_texts_owed` ON `stray_texts` (`organisation_id`,`settled_at`,`priority`,`due_at`);--> statement-breakpoint
-CREATE INDEX `stray_texts_overdue` ON `stray_texts` (`settled_at`,`due_at`);
+CREATE INDEX `stray_texts_owed` ON `stray_texts` (`organisation_id`,`settled_at`,`priority`,`due_at`);

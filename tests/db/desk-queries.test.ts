@@ -21,6 +21,7 @@ const GROWING = [
 	'check_ins',
 	'messages',
 	'thread_entries',
+	'stray_texts',
 	'measurements',
 	'phototherapy_courses'
 ];

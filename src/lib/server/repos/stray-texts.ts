@@ -110,11 +110,12 @@ export async function listUnassignedIds(tx: Tx, phone: string): Promise<string[]
 	return rows.map(({ id }) => id);
 }
 
-/** Texts of every organisation whose due time has passed by then. */
+/** Texts whose due time has passed by then, by way of the few organisations, whose index this is. */
 export function listStraysDueBy(db: Reader, by: Date, limit: number) {
 	return db
 		.select({ entryId: strayTexts.entryId, priority: strayTexts.priority, dueAt: strayTexts.dueAt })
-		.from(strayTexts)
+		.from(organisations)
+		.innerJoin(strayTexts, eq(strayTexts.organisationId, organisations.id))
 		.where(and(isNull(strayTexts.settledAt), lte(strayTexts.dueAt, by)))
 		.orderBy(asc(strayTexts.dueAt))
 		.limit(limit);

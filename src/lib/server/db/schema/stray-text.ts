@@ -32,8 +32,7 @@ export const strayTexts = mysqlTable(
 	},
 	(t) => [
 		// The queue's question: all equal, then in the order of the work.
-		index('stray_texts_owed').on(t.organisationId, t.settledAt, t.priority, t.dueAt),
-		// The watch's question, over all organisations.
-		index('stray_texts_overdue').on(t.settledAt, t.dueAt)
+		// An index on the settling alone would be taken instead, and its rows sorted.
+		index('stray_texts_owed').on(t.organisationId, t.settledAt, t.priority, t.dueAt)
 	]
 );
