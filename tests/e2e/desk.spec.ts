@@ -143,12 +143,31 @@ test.describe('texts from numbers we do not know', () => {
 		await expect(ofNumber(page, '(202) 555-0163')).toContainText('this is Rosa, the grandmother');
 		await expect(ofNumber(page, '(202) 555-0163')).not.toContainText('May be an emergency');
 		await expectAccessible(page);
-		await page.emulateMedia({ colorScheme: 'dark' });
-		await page.setViewportSize({ width: 390, height: 844 });
-		await expectAccessible(page);
-		await expectNoSidewaysScroll(page);
 		await signInAgain(page, 'desk.mill@example.org');
 		await expect(strays(page).first()).toContainText('(202) 555-0158');
+	});
+
+	test('are read in the dark and on a telephone, the panel in place of the list', async ({ page }) => {
+		await page.emulateMedia({ colorScheme: 'dark' });
+		await page.setViewportSize({ width: 390, height: 844 });
+		await asDesk(page);
+		await page.goto('/queue');
+		await scripted(page);
+		await expectNoSidewaysScroll(page);
+		await strays(page)
+			.first()
+			.getByRole('link', { name: /^It is about/ })
+			.click();
+		await expect(textPanel(page)).toContainText('These words may be an emergency.');
+		await expect(rows(page).first()).toBeHidden();
+		await expectNoSidewaysScroll(page);
+		await expectAccessible(page);
+		await page.keyboard.press('Escape');
+		await expect(
+			strays(page)
+				.first()
+				.getByRole('link', { name: /^It is about/ })
+		).toBeFocused();
 	});
 
 	test('are put into the thread of the newborn that they are about', async ({ page }) => {
@@ -160,7 +179,6 @@ test.describe('texts from numbers we do not know', () => {
 			.click();
 		await expect(textPanel(page)).toContainText('These words may be an emergency. Call this number now.');
 		await expect(page.locator('#stray-title')).toBeFocused();
-		await expectAccessible(page);
 		const about = panelPart(page, 'It is about …');
 		await about.getByLabel('Name, date of birth or record number').fill('Farou');
 		const newborn = about.getByRole('radio', { name: /^Farouk, Yusuf/ });
