@@ -4,6 +4,7 @@ import { getCallPanel } from '../../src/lib/server/services/call-panel';
 import { getCalendar } from '../../src/lib/server/services/desk-calendar';
 import { getMorning } from '../../src/lib/server/services/morning';
 import { getQueue } from '../../src/lib/server/services/queue';
+import { getStray } from '../../src/lib/server/services/stray-view';
 import { makeCrowd } from '../support/crowd';
 import { openTestDatabase } from '../support/database';
 import { MONDAY, openWorld, type World } from '../support/follow-up-world';
@@ -21,6 +22,7 @@ const GROWING = [
 	'check_ins',
 	'messages',
 	'thread_entries',
+	'stray_texts',
 	'measurements',
 	'phototherapy_courses'
 ];
@@ -65,6 +67,7 @@ async function plansOf(statements: readonly Statement[]): Promise<Plan[]> {
 describe('the desk’s queries over years of newborns', () => {
 	let world: World;
 	let followUpId = '';
+	let strayId = '';
 
 	beforeAll(async () => {
 		await database.clean();
@@ -74,8 +77,9 @@ describe('the desk’s queries over years of newborns', () => {
 		await makeCrowd(database.db, at, { count: 4_000, stage: 'closed' });
 		await makeCrowd(database.db, at, { count: 230, stage: 'booked' });
 		await database.pool.query(`analyze table ${GROWING.join(', ')}`);
-		const { rows } = await getQueue(world.ctx, east.desk.actor, { limit: 1 });
+		const { rows, strays } = await getQueue(world.ctx, east.desk.actor, { limit: 1 });
 		followUpId = rows[0]?.followUpId ?? '';
+		strayId = strays[0]?.texts[0]?.entryId ?? '';
 	}, 240_000);
 	afterAll(() => database.clean());
 
@@ -83,10 +87,11 @@ describe('the desk’s queries over years of newborns', () => {
 		queue: () => getQueue(world.ctx, world.east.desk.actor, { limit: 100 }),
 		'call panel': () => getCallPanel(world.ctx, world.east.desk.actor, followUpId),
 		calendar: () => getCalendar(world.ctx, world.east.desk.actor, { forId: followUpId }),
-		'morning list': () => getMorning(world.ctx, world.east.desk.actor, { on: '2026-03-02' })
+		'morning list': () => getMorning(world.ctx, world.east.desk.actor, { on: '2026-03-02' }),
+		'text of an unknown number': () => getStray(world.ctx, world.east.desk.actor, strayId)
 	});
 
-	test.each(['queue', 'call panel', 'calendar', 'morning list'])(
+	test.each(['queue', 'call panel', 'calendar', 'morning list', 'text of an unknown number'])(
 		'the %s reads growing tables by an index and sorts none of them',
 		async (name) => {
 			const work = works()[name];

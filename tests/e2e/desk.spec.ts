@@ -12,6 +12,11 @@ async function signIn(page: Page, email: string): Promise<void> {
 	await page.waitForURL((url) => !url.pathname.startsWith('/sign-in'));
 }
 
+async function signInAgain(page: Page, email: string): Promise<void> {
+	await page.context().clearCookies();
+	await signIn(page, email);
+}
+
 const asDesk = (page: Page) => signIn(page, 'desk@example.org');
 
 /** Scripts are running: before that, keys do nothing and a form would be sent whole. */
@@ -117,6 +122,111 @@ test.describe('the queue', () => {
 		await expect(rows(page).first()).toBeVisible();
 		await expect(page).toHaveURL(/\/queue\?show=did-not-come$/);
 		await expectNoSidewaysScroll(page);
+	});
+});
+
+test.describe('texts from numbers we do not know', () => {
+	const strays = (page: Page): Locator =>
+		page.getByRole('region', { name: 'Texts from numbers we do not know' }).getByRole('listitem');
+	const ofNumber = (page: Page, number: string): Locator =>
+		strays(page).filter({ has: page.getByRole('link', { name: `Call ${number}` }) });
+	const textPanel = (page: Page): Locator => page.locator('section[aria-labelledby="stray-title"]');
+	const panelPart = (page: Page, name: string): Locator =>
+		textPanel(page).getByRole('region', { name, exact: true });
+
+	test('stand above the rows, alarming ones first, and say what was done for them', async ({ page }) => {
+		await asDesk(page);
+		await page.goto('/queue');
+		await expect(strays(page).first()).toContainText('(202) 555-0158');
+		await expect(strays(page).first()).toContainText('May be an emergency');
+		await expect(strays(page).first()).toContainText('The emergency advice was sent to this number.');
+		await expect(ofNumber(page, '(202) 555-0163')).toContainText('this is Rosa, the grandmother');
+		await expect(ofNumber(page, '(202) 555-0163')).not.toContainText('May be an emergency');
+		await expectAccessible(page);
+		await signInAgain(page, 'desk.mill@example.org');
+		await expect(strays(page).first()).toContainText('(202) 555-0158');
+	});
+
+	test('are read in the dark and on a telephone, the panel in place of the list', async ({ page }) => {
+		await page.emulateMedia({ colorScheme: 'dark' });
+		await page.setViewportSize({ width: 390, height: 844 });
+		await asDesk(page);
+		await page.goto('/queue');
+		await scripted(page);
+		await expectNoSidewaysScroll(page);
+		await strays(page)
+			.first()
+			.getByRole('link', { name: /^It is about/ })
+			.click();
+		await expect(textPanel(page)).toContainText('These words may be an emergency.');
+		await expect(rows(page).first()).toBeHidden();
+		await expectNoSidewaysScroll(page);
+		await expectAccessible(page);
+		await page.keyboard.press('Escape');
+		await expect(
+			strays(page)
+				.first()
+				.getByRole('link', { name: /^It is about/ })
+		).toBeFocused();
+	});
+
+	test('are put into the thread of the newborn that they are about', async ({ page }) => {
+		await asDesk(page);
+		await page.goto('/queue');
+		await scripted(page);
+		await ofNumber(page, '(202) 555-0158')
+			.getByRole('link', { name: /^It is about/ })
+			.click();
+		await expect(textPanel(page)).toContainText('These words may be an emergency. Call this number now.');
+		await expect(page.locator('#stray-title')).toBeFocused();
+		const about = panelPart(page, 'It is about …');
+		await about.getByLabel('Name, date of birth or record number').fill('Farou');
+		const newborn = about.getByRole('radio', { name: /^Farouk, Yusuf/ });
+		await expect(newborn).toBeVisible();
+		await about.getByRole('button', { name: 'Put it into' }).click();
+		await expect(about).toContainText('Choose a newborn.');
+		await newborn.check();
+		await expectAccessible(page);
+		await about.getByRole('button', { name: 'Put it into' }).click();
+		await expect(page.getByText('The text is in the thread with this family.')).toBeFocused();
+		await expect(part(page, 'Also owed')).toContainText('Alarming words from the family');
+		await expect(part(page, 'Also owed')).toContainText('will not wake up to feed');
+		await expect(ofNumber(page, '(202) 555-0158')).toHaveCount(0);
+		await panel(page).getByRole('link', { name: 'Thread with the family' }).click();
+		const said = page.getByRole('list', { name: 'Oldest first' });
+		await expect(said).toContainText('(202) 555-0158');
+		await expect(said).toContainText('will not wake up to feed');
+		await expect(said).toContainText('Emergency advice');
+	});
+
+	test('are settled with a reason where they are not ours; whoever comes second is told', async ({
+		page,
+		browser,
+		baseURL
+	}) => {
+		await asDesk(page);
+		await page.goto('/queue');
+		await scripted(page);
+		await ofNumber(page, '(202) 555-0163')
+			.getByRole('link', { name: /^Not one of ours/ })
+			.click();
+		await expect(page.locator('#not-ours')).toBeFocused();
+		const address = new URL(page.url()).pathname;
+		const second = await browser.newContext({ javaScriptEnabled: false, ...(baseURL ? { baseURL } : {}) });
+		const other = await second.newPage();
+		await signIn(other, 'desk.mill@example.org');
+		await other.goto(`${address}?q=Okafor`);
+		await other.getByRole('radio', { name: /^Okafor/ }).check({ force: true });
+
+		const notOurs = panelPart(page, 'Not one of ours');
+		await notOurs.getByLabel('Why it is not one of ours').fill('Meant for another clinic');
+		await notOurs.getByRole('button', { name: 'Not one of ours' }).click();
+		await expect(page.getByText('Marked as not one of ours.')).toBeFocused();
+		await expect(ofNumber(page, '(202) 555-0163')).toHaveCount(0);
+
+		await other.getByRole('button', { name: 'Put it into' }).click();
+		await expect(textPanel(other)).toContainText('Dario Fenwick marked it as not one of ours');
+		await second.close();
 	});
 });
 

@@ -26,7 +26,8 @@ const params = (side: 'east' | 'west'): Record<string, string> => ({
 	kind: 'visit-booked',
 	channel: 'sms',
 	language: 'en',
-	checkInId: 'thereisnosuchone'
+	checkInId: 'thereisnosuchone',
+	entryId: 'thereisnosuchone'
 });
 /** Routes whose record may be one of the other side. */
 const hasRecord = (id: string): boolean => /\[(followUpId|siteId)\]/.test(id);

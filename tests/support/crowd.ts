@@ -1,6 +1,7 @@
 import type { Db } from '../../src/lib/server/db/client';
 import { alerts, attempts, checkIns, followUps, visits } from '../../src/lib/server/db/schema/follow-up';
 import { messages, threadEntries } from '../../src/lib/server/db/schema/messaging';
+import { strayTexts } from '../../src/lib/server/db/schema/stray-text';
 import { carers, measurements, newborns, phototherapyCourses } from '../../src/lib/server/db/schema/newborn';
 import type { Stage } from '../../src/lib/domain/followup/states';
 import { systemRandom } from '../../src/lib/server/random';
@@ -43,7 +44,8 @@ async function insertChunk(db: Db, rows: readonly One[]): Promise<void> {
 	await db.insert(attempts).values(all('attempt'));
 	await db.insert(checkIns).values(all('checkIn'));
 	await db.insert(messages).values(all('message'));
-	await db.insert(threadEntries).values(all('words'));
+	await db.insert(threadEntries).values([...all('words'), ...all('strayWords')]);
+	await db.insert(strayTexts).values(all('strayText'));
 	await db.insert(alerts).values(all('alert'));
 }
 
@@ -102,7 +104,7 @@ function newbornPart(at: CrowdAt, newbornId: string, bornAt: Date) {
 function oneOf(at: CrowdAt, stage: Stage, index: number) {
 	const isOpen = stage !== 'closed';
 	const bornAt = new Date(at.now.getTime() - (isOpen ? 50 : 2_000 + index * 3) * HOUR);
-	const [newbornId, followUpId] = [systemRandom.id(), systemRandom.id()];
+	const [newbornId, followUpId, strayId] = [systemRandom.id(), systemRandom.id(), systemRandom.id()];
 	const happened = new Date(bornAt.getTime() + 40 * HOUR);
 	const family = newbornPart(at, newbornId, bornAt);
 	return {
@@ -187,6 +189,22 @@ function oneOf(at: CrowdAt, stage: Stage, index: number) {
 			direction: 'in' as const,
 			body: 'Thank you',
 			at: happened
+		},
+		strayWords: {
+			id: strayId,
+			phone: `+1202555${String(index % 10_000).padStart(4, '0')}`,
+			direction: 'in' as const,
+			body: 'Who is this?',
+			isAlarming: index % 10 === 0,
+			at: happened
+		},
+		strayText: {
+			entryId: strayId,
+			organisationId: at.organisationId,
+			priority: index % 10 === 0 ? 0 : 5,
+			dueAt: at.now,
+			settledAt: isOpen && index % 5 === 0 ? null : at.now,
+			settledAs: isOpen && index % 5 === 0 ? null : ('not-ours' as const)
 		},
 		alert: {
 			id: systemRandom.id(),

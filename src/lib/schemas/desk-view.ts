@@ -7,6 +7,7 @@ import type { VisitKind, VisitState } from '../domain/followup/visit';
 import type { CheckInResult, FollowUpWindow } from '../domain/guideline/types';
 import type { Language } from '../domain/messaging/language';
 import type { HourLineModel } from '../ui/hour-line/model';
+import type { StrayNumber } from './stray';
 
 /** What the front desk's screens show; the same shapes from a page's load and from the JSON that keeps it fresh. */
 
@@ -94,6 +95,9 @@ export interface QueueRow extends DeskRow {
 
 export interface QueueView {
 	readonly nowAt: Date;
+	/** Texts of numbers that belong to no family, whatever the clinic or group chosen; alarming ones first. */
+	readonly strays: readonly StrayNumber[];
+	readonly hasMoreStrays: boolean;
 	readonly clinics: readonly ClinicChoice[];
 	/** Null for all of the reader's clinics. */
 	readonly clinicId: string | null;

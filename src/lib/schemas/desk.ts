@@ -96,7 +96,9 @@ export const DONE = {
 	missed: 'Marked as did not come. The family has to be reached.',
 	settled: 'Settled.',
 	asked: 'The pediatrician was asked. Nothing is booked until the answer comes.',
-	approved: 'Approved and booked.'
+	approved: 'Approved and booked.',
+	textAssigned: 'The text is in the thread with this family. Reading it is owed here now.',
+	notOurs: 'Marked as not one of ours. Nobody owes it any more.'
 } as const;
 export type Done = keyof typeof DONE;
 

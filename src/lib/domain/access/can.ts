@@ -14,6 +14,8 @@ export type Action =
 	| 'visit.approve-outside-window'
 	| 'thread.view'
 	| 'thread.write'
+	/** Texts of numbers that belong to no family have no site: every desk of the organisation owes them. */
+	| 'stray-text.settle'
 	| 'attempt.log'
 	| 'alert.settle'
 	| 'follow-up.view'
@@ -59,6 +61,7 @@ const PERMISSIONS: Readonly<Record<Role, Partial<Record<Action, Reach>>>> = {
 		'visit.manage': AT_CLINIC,
 		'thread.view': AT_CLINIC,
 		'thread.write': AT_CLINIC,
+		'stray-text.settle': EVERYWHERE,
 		'attempt.log': AT_CLINIC,
 		'alert.settle': AT_CLINIC,
 		'follow-up.view': AT_CLINIC,
@@ -79,6 +82,7 @@ const PERMISSIONS: Readonly<Record<Role, Partial<Record<Action, Reach>>>> = {
 		'visit.approve-outside-window': AT_CLINIC,
 		'thread.view': AT_CLINIC,
 		'thread.write': AT_CLINIC,
+		'stray-text.settle': EVERYWHERE,
 		'attempt.log': AT_CLINIC,
 		'alert.settle': AT_CLINIC,
 		'follow-up.view': AT_CLINIC,

@@ -59,6 +59,21 @@ describe('words of families', () => {
 	});
 
 	it.each([
+		['she will not wake up', 'en'],
+		['no respira, llamo al 911', 'es'],
+		['bé bị sốt', 'vi'],
+		['宝宝叫不醒', 'zh'],
+		['طفلي لا يرضع', 'ar'],
+		['HELP', 'en'],
+		['ayuda', 'es'],
+		['parar', 'es'],
+		['911', null],
+		['Is it ok to bring her brother?', null]
+	])('"%s" is told to be of the language %s', (text, language) =>
+		expect(understand(text).language).toBe(language)
+	);
+
+	it.each([
 		'call me at 555-0120 or 555-0911',
 		'is the blood test needed',
 		'الأسبوع القادم',

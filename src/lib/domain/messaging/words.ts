@@ -20,6 +20,8 @@ export interface Understood {
 	readonly number: number | null;
 	/** Holds a word that could mean an emergency. */
 	readonly isAlarming: boolean;
+	/** The language that the alarm words, or the one word of a stop, start or help, are of; null where nothing tells. */
+	readonly language: Language | null;
 }
 
 /**
@@ -82,8 +84,22 @@ function holds(text: string, phrase: string, language: Language): boolean {
 const holdsAny = (text: string, meaning: keyof WordList): boolean =>
 	LANGUAGES.some((language) => LISTS[language][meaning].some((phrase) => holds(text, phrase, language)));
 
-const isOneOf = (text: string, meaning: keyof WordList): boolean =>
-	LANGUAGES.some((language) => LISTS[language][meaning].includes(text));
+/** The first language in which the text is one of these words. */
+const languageWhere = (text: string, meaning: keyof WordList): Language | null =>
+	LANGUAGES.find((language) => LISTS[language][meaning].includes(text)) ?? null;
+
+const isOneOf = (text: string, meaning: keyof WordList): boolean => languageWhere(text, meaning) !== null;
+
+/** The language with the most alarm words in the text; a number such as 911 is of none. */
+function alarmLanguage(text: string): Language | null {
+	const counts = LANGUAGES.map((language) => ({
+		language,
+		count: LISTS[language].alarm.filter((phrase) => !/^\d+$/.test(phrase) && holds(text, phrase, language))
+			.length
+	}));
+	const most = counts.reduce((best, one) => (one.count > best.count ? one : best));
+	return most.count === 0 ? null : most.language;
+}
 
 function withoutCourtesy(text: string): string {
 	let rest = ` ${text} `;
@@ -99,22 +115,29 @@ function withoutCourtesy(text: string): string {
  * What a family's text means, whatever the language it is written in: people answer in the language of the moment.
  * Stop, start, help and confirm must be the whole message, thanks apart, so that a sentence that happens to hold such a
  * word goes to a person. An alarm word anywhere marks the text and is never taken for a confirmation.
- * Example: `understand('Sí, gracias')` means confirm; `understand('yes but he will not wake')` is alarming words.
+ * Example: `understand('Sí, gracias')` means confirm; `understand('yes but he will not wake')` is alarming words in English.
  */
 export function understand(text: string): Understood {
 	const simple = simplify(text);
 	const core = withoutCourtesy(simple);
 	const number = /^\d$/.test(core) ? Number(core) : null;
-	if (core === '')
-		return { means: holdsAny(simple, 'thanks') ? 'thanks' : 'words', number: null, isAlarming: false };
-	if (isOneOf(core, 'stop')) return { means: 'stop', number, isAlarming: false };
-	if (isOneOf(core, 'start')) return { means: 'start', number, isAlarming: false };
-	if (holdsAny(simple, 'alarm')) return { means: 'words', number, isAlarming: true };
-	return { means: quietMeaning(core, number), number, isAlarming: false };
+	const whole = (means: 'stop' | 'start' | 'help'): Understood => ({
+		means,
+		number,
+		isAlarming: false,
+		language: languageWhere(core, means)
+	});
+	const quiet = (means: Meaning): Understood => ({ means, number, isAlarming: false, language: null });
+	if (core === '') return quiet(holdsAny(simple, 'thanks') ? 'thanks' : 'words');
+	if (isOneOf(core, 'stop')) return whole('stop');
+	if (isOneOf(core, 'start')) return whole('start');
+	if (holdsAny(simple, 'alarm'))
+		return { means: 'words', number, isAlarming: true, language: alarmLanguage(simple) };
+	if (isOneOf(core, 'help')) return whole('help');
+	return quiet(quietMeaning(core, number));
 }
 
 function quietMeaning(core: string, number: number | null): Meaning {
-	if (isOneOf(core, 'help')) return 'help';
 	if (number === 1 || isOneOf(core, 'confirm')) return 'confirm';
 	if (number === 2 || /^2 /.test(core) || holdsAny(core, 'otherTime')) return 'other-time';
 	return number === null ? 'words' : 'choice';

@@ -32,6 +32,8 @@ export const ACCESS_ACTIONS = {
 	'follow-up.changed': 'changed a follow-up',
 	'summary.viewed': 'opened the summary',
 	'thread.viewed': 'looked at the thread with a family',
+	'stray-text.assigned': 'put a text of an unknown number into a thread',
+	'stray-text.not-ours': 'marked a text of an unknown number as not one of ours',
 	'search.made': 'searched',
 	'feed.made': 'made a calendar feed',
 	'feed.revoked': 'revoked a calendar feed',

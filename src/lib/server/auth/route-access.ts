@@ -76,6 +76,10 @@ export const ROUTE_ACCESS: Readonly<Record<string, RouteAccess>> = {
 		askOutside: 'visit.manage',
 		approve: 'visit.approve-outside-window'
 	}),
+	'/(staff)/queue/texts/[entryId]': page('stray-text.settle', {
+		assign: 'stray-text.settle',
+		notOurs: 'stray-text.settle'
+	}),
 	'/(staff)/calendar': page('calendar.view', { choose: 'visit.manage' }),
 	'/(staff)/morning': page('queue.view', {
 		confirm: 'visit.manage',

@@ -5,8 +5,9 @@ import * as messaging from './schema/messaging';
 import * as newborn from './schema/newborn';
 import * as organisation from './schema/organisation';
 import * as staff from './schema/staff';
+import * as strayText from './schema/stray-text';
 
-const schema = { ...organisation, ...staff, ...newborn, ...followUp, ...messaging };
+const schema = { ...organisation, ...staff, ...newborn, ...followUp, ...messaging, ...strayText };
 
 /** Opens a pool whose sessions speak UTC. Close it before the process ends, or the process does not. */
 export function openDatabase(url: string, connectionLimit = 10) {

@@ -17,11 +17,15 @@ export async function listHeads(db: Reader, followUpIds: readonly string[]) {
 		.where(inArray(followUps.id, [...followUpIds]));
 }
 
-/** The sites that messages are sent for, with their organisation's emergency number. */
+/** The sites that messages are sent for, with their organisation's name and emergency number. */
 export async function listSitesOfMessages(db: Reader, siteIds: readonly string[]) {
 	if (siteIds.length === 0) return [];
 	return db
-		.select({ site: sites, emergencyNumber: organisations.emergencyNumber })
+		.select({
+			site: sites,
+			organisationName: organisations.name,
+			emergencyNumber: organisations.emergencyNumber
+		})
 		.from(sites)
 		.innerJoin(organisations, eq(organisations.id, sites.organisationId))
 		.where(inArray(sites.id, [...siteIds]));
@@ -64,7 +68,7 @@ export async function listLastReached(db: Reader, followUpIds: readonly string[]
 export async function listEntriesByIds(db: Reader, ids: readonly string[]) {
 	if (ids.length === 0) return [];
 	return db
-		.select({ id: threadEntries.id, body: threadEntries.body })
+		.select({ id: threadEntries.id, body: threadEntries.body, phone: threadEntries.phone })
 		.from(threadEntries)
 		.where(inArray(threadEntries.id, [...ids]));
 }

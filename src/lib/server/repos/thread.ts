@@ -4,6 +4,7 @@ import { alerts, followUps, visits } from '../db/schema/follow-up';
 import { messages, threadEntries } from '../db/schema/messaging';
 import { carers, newborns } from '../db/schema/newborn';
 import { staff } from '../db/schema/staff';
+import { strayTexts } from '../db/schema/stray-text';
 
 export type ThreadEntryRow = typeof threadEntries.$inferSelect;
 
@@ -38,19 +39,31 @@ export async function insertEntry(tx: Reader, row: typeof threadEntries.$inferIn
 	await tx.insert(threadEntries).values(row);
 }
 
-/** Texts of a number that wait for the answer which newborn they are about, newest first. */
+/**
+ * Texts of a number that wait for the answer which newborn they are about, newest first. Not those that came while the
+ * number was nobody's: nobody was asked about them, and a desk owes them.
+ */
 export async function listUnassigned(db: Reader, phone: string, since: Date): Promise<ThreadEntryRow[]> {
-	return db
-		.select()
+	const rows = await db
+		.select({ entry: threadEntries })
 		.from(threadEntries)
-		.where(and(eq(threadEntries.phone, phone), isNull(threadEntries.followUpId), gt(threadEntries.at, since)))
+		.leftJoin(strayTexts, eq(strayTexts.entryId, threadEntries.id))
+		.where(
+			and(
+				eq(threadEntries.phone, phone),
+				isNull(threadEntries.followUpId),
+				gt(threadEntries.at, since),
+				isNull(strayTexts.entryId)
+			)
+		)
 		.orderBy(desc(threadEntries.at), desc(threadEntries.id));
+	return rows.map(({ entry }) => entry);
 }
 
 export async function assignEntries(
 	tx: Reader,
 	ids: readonly string[],
-	{ followUpId, carerId }: { readonly followUpId: string; readonly carerId: string }
+	{ followUpId, carerId }: { readonly followUpId: string; readonly carerId: string | null }
 ): Promise<void> {
 	if (ids.length === 0) return;
 	await tx

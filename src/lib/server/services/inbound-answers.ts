@@ -1,5 +1,6 @@
 import type { MessageKind } from '../../domain/messaging/kinds';
 import { dedupeKeyOf, PRIORITY } from '../../domain/messaging/plan-facts';
+import { readBy } from '../../domain/messaging/reading';
 import type { Ctx } from '../context';
 import type { Tx } from '../db/client';
 import { withTx } from '../db/tx';
@@ -9,8 +10,6 @@ import { raiseAlert } from './alerts';
 
 const MINUTE = 60_000;
 const HOUR = 60 * MINUTE;
-/** Words that do not alarm are read within this time (common practice, no source). */
-const READ_WITHIN_HOURS = 2;
 
 type AnswerKind = Extract<
 	MessageKind,
@@ -70,11 +69,17 @@ export async function askWhich(ctx: Ctx, { entry, known }: Pick<Answer, 'entry' 
 }
 
 interface Words {
-	readonly entry: ThreadEntryRow;
-	readonly about: PhoneFollowUp;
+	readonly entry: Pick<ThreadEntryRow, 'id' | 'body'>;
+	readonly about: Pick<PhoneFollowUp, 'followUpId' | 'clinicId'>;
 	readonly isAlarming: boolean;
 	/** The number belongs to several newborns and the words do not say which. */
 	readonly isUncertain: boolean;
+}
+
+interface OwedWords extends Words {
+	readonly dueAt: Date;
+	/** The number is none of the family's. */
+	readonly isStray?: boolean;
 }
 
 const wordsKey = (entryId: string, followUpId: string, role: string, isUncertain: boolean): string =>
@@ -94,30 +99,38 @@ export async function settleUncertain(
 }
 
 /** Words that a person has to read: at once where they alarm, by desk and pediatrician. */
-export async function alertWords(ctx: Ctx, { entry, about, isAlarming, isUncertain }: Words): Promise<void> {
-	const now = ctx.clock.now();
+export async function alertWords(ctx: Ctx, words: Words): Promise<void> {
+	const dueAt = readBy(ctx.clock.now(), words.isAlarming);
+	await withTx(ctx.db, (tx) => raiseWords(tx, ctx, { ...words, dueAt }));
+}
+
+/** The same inside a transaction, for words whose due time stands already. */
+export async function raiseWords(
+	tx: Tx,
+	ctx: Ctx,
+	{ entry, about, isAlarming, isUncertain, dueAt, isStray = false }: OwedWords
+): Promise<void> {
 	const which = isUncertain ? 'About one of several newborns of this family. ' : '';
+	const from = isStray ? 'From a number that is not on record; the thread shows it. ' : '';
 	const roles = isAlarming ? (['desk', 'pediatrician'] as const) : (['desk'] as const);
-	await withTx(ctx.db, async (tx) => {
-		for (const role of roles) {
-			await raiseAlert(tx, ctx, {
-				followUpId: about.followUpId,
-				kind: isAlarming ? 'alarming-words' : 'words-from-family',
-				role,
-				siteId: about.clinicId,
-				dueAt: isAlarming ? now : new Date(now.getTime() + READ_WITHIN_HOURS * HOUR),
-				detail: `${which}The family wrote: ${entry.body}`.slice(0, 500),
-				dedupeKey: wordsKey(entry.id, about.followUpId, role, isUncertain)
-			});
-		}
-	});
+	for (const role of roles) {
+		await raiseAlert(tx, ctx, {
+			followUpId: about.followUpId,
+			kind: isAlarming ? 'alarming-words' : 'words-from-family',
+			role,
+			siteId: about.clinicId,
+			dueAt,
+			detail: `${which}${from}The family wrote: ${entry.body}`.slice(0, 500),
+			dedupeKey: wordsKey(entry.id, about.followUpId, role, isUncertain)
+		});
+	}
 }
 
 /** A stopped channel is a family that reminders no longer reach: the desk finds another way. */
 export async function alertContactStopped(
 	tx: Tx,
 	ctx: Ctx,
-	{ entry, about }: Pick<Words, 'entry' | 'about'>
+	{ entry, about }: { readonly entry: ThreadEntryRow; readonly about: PhoneFollowUp }
 ): Promise<void> {
 	const now = ctx.clock.now().getTime();
 	const halfWay = about.visitAt === null ? Infinity : Math.max(now, (now + about.visitAt.getTime()) / 2);

@@ -22,6 +22,7 @@ import {
 	settleUncertain
 } from './inbound-answers';
 import { replanMessages } from './message-plan';
+import { receiveStray } from './stray-texts';
 import { askForAnotherTime, confirmVisit } from './visits';
 
 const HOUR = 3_600_000;
@@ -47,8 +48,7 @@ export async function receiveText(ctx: Ctx, text: IncomingText): Promise<void> {
 	const means = chosen === null ? said.means : 'choice';
 	const about = chosen?.about ?? only(known);
 	const entry = await keepEntry(ctx, { text, means, isAlarming: said.isAlarming, about });
-	if (known.length === 0)
-		return ctx.log.warn({ entryId: entry.id }, 'a text came from a number of no family');
+	if (known.length === 0) return receiveStray(ctx, { entry, said });
 	if (chosen !== null) return actOnWaiting(ctx, chosen, known);
 	await act(ctx, { entry, said, known });
 }

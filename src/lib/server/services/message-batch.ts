@@ -22,6 +22,7 @@ import { isLinkAlive, linkUrl } from './parent-links';
 export interface MessageFacts {
 	readonly message: MessageRow;
 	readonly organisationId: string;
+	readonly organisationName: string;
 	readonly emergencyNumber: string;
 	readonly site: SiteRow;
 	readonly followUp: FollowUpRow | null;
@@ -30,6 +31,8 @@ export interface MessageFacts {
 	readonly holds: HoldFacts | null;
 	readonly link: string | undefined;
 	readonly words: string | undefined;
+	/** The number that wrote what this answers, where it belongs to no carer. */
+	readonly strayPhone: string | null;
 	readonly choices: readonly string[] | undefined;
 	readonly template: TemplateRow | null;
 }
@@ -61,9 +64,12 @@ export async function loadMessageFacts(
 		const followUp = loaded.followUps.get(message.followUpId ?? '') ?? null;
 		const visits = loaded.visits.filter(({ followUpId }) => followUpId === message.followUpId);
 		const visit = visits.find(({ id }) => id === message.facts.visitId) ?? null;
-		const at = loaded.sites.get(visit?.clinicId ?? followUp?.clinicId ?? message.siteId);
+		// What goes to no carer keeps the site it was planned for, also once its text is in a newborn's thread.
+		const ofFamily = message.carerId === null ? undefined : (visit?.clinicId ?? followUp?.clinicId);
+		const at = loaded.sites.get(ofFamily ?? message.siteId);
 		if (at === undefined) return [];
-		const { site, emergencyNumber } = at;
+		const { site, organisationName, emergencyNumber } = at;
+		const entry = loaded.entries.get(message.facts.threadEntryId ?? '');
 		const link = loaded.links.find(
 			(one) =>
 				one.followUpId === message.followUpId && one.carerId === message.carerId && isLinkAlive(one, now)
@@ -72,6 +78,7 @@ export async function loadMessageFacts(
 			{
 				message,
 				organisationId: site.organisationId,
+				organisationName,
 				emergencyNumber,
 				site,
 				followUp,
@@ -87,7 +94,8 @@ export async function loadMessageFacts(
 					lastReachedAt: loaded.lastReached.get(followUp.id) ?? null
 				},
 				link: link && linkUrl(ctx, link.id),
-				words: loaded.words.get(message.facts.threadEntryId ?? ''),
+				words: entry?.body,
+				strayPhone: message.carerId === null ? (entry?.phone ?? null) : null,
 				choices: choicesOf(message, loaded.marks),
 				template: templateOf(site.organisationId, message)
 			}
@@ -120,7 +128,7 @@ async function load(db: Reader, rows: readonly MessageRow[]) {
 		links: await listLinks(db, followUpIds),
 		lastCheckIns: lastOf(await listLastCheckIns(db, having(['check-in-ask']))),
 		lastReached: lastOf(await listLastReached(db, having(['visit-missed-again']))),
-		words: new Map(entries.map(({ id, body }) => [id, body])),
+		entries: byId(entries),
 		marks: newbornMarks(await listNewbornMarks(db, asked))
 	};
 }

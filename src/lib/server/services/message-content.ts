@@ -61,9 +61,9 @@ function notNow(facts: MessageFacts, now: Date): RenderedMessage | null {
 }
 
 /** Where the message goes, if the channel is open to us. */
-function address({ message, carer, site }: MessageFacts): string | null {
+function address({ message, carer, site, strayPhone }: MessageFacts): string | null {
 	if (message.kind === 'duty-finding') return site.dutyEmail;
-	if (carer === null) return null;
+	if (carer === null) return message.channel === 'sms' && ANSWERS.includes(message.kind) ? strayPhone : null;
 	if (message.channel === 'mail') return canMail(carer) ? carer.email : null;
 	return canSms(carer) || ANSWERS.includes(message.kind) ? carer.phone : null;
 }
@@ -72,11 +72,12 @@ const RESULTS: readonly CheckInResult[] = ['emergency', 'today', 'call-back', 'a
 
 /** Values of all fields that the message's facts allow. */
 export function valuesOf(ctx: Ctx, facts: MessageFacts): FieldValues {
-	const { message, visit, site } = facts;
+	const { message, visit, site, strayPhone } = facts;
 	return fieldValues({
 		language: message.language,
 		channel: message.channel,
-		clinic: site,
+		// Whose clinic an unknown number means is not known: the organisation speaks, with the telephones of this clinic.
+		clinic: strayPhone === null ? site : { ...site, name: facts.organisationName },
 		emergencyNumber: facts.emergencyNumber,
 		link: facts.link,
 		visit: visit ? { startsAt: visit.startsAt, isConfirmed: visit.state === 'confirmed' } : undefined,

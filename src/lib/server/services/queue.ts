@@ -21,6 +21,7 @@ import {
 	type AlertRow
 } from '../repos/queue';
 import { deskRows } from './desk-rows';
+import { listStrays } from './stray-view';
 
 export interface QueueAsked {
 	/** One of the actor's clinics; absent or unknown: all of them. */
@@ -119,8 +120,11 @@ export async function getQueue(ctx: Ctx, actor: StaffActor, asked: QueueAsked): 
 		inGroup.map(({ facts }) => facts),
 		now
 	).map(({ followUpId }) => followUpId);
+	const strays = await listStrays(ctx, actor);
 	return {
 		nowAt: now,
+		strays: strays.numbers,
+		hasMoreStrays: strays.hasMore,
 		clinics: clinics.map(({ id, name, timeZone }) => ({ id, name, timeZone })),
 		clinicId: chosen?.id ?? null,
 		group,

@@ -10,9 +10,11 @@ import { withTx } from '../db/tx';
 import { invalid, notAllowed, notFound, type AppError } from '../errors';
 import { insertMessages, isPlanned } from '../repos/messages';
 import { assignEntries, findThreadHead, insertEntry, listThread, markRead } from '../repos/thread';
+import { findStray } from '../repos/stray-texts';
 import { settleAlertsOf } from './alerts';
 import { ensureParentLink } from './parent-links';
 import { canMail, canSms } from './message-plan';
+import { intoThread } from './stray-settle';
 import { threadResource } from './thread';
 
 const HOUR = 3_600_000;
@@ -91,6 +93,10 @@ export async function assignText(
 		const carer = head.carers.find(({ phone }) => phone === found?.entry.phone);
 		if (found === undefined || carer === undefined) return err(notFound);
 		await assignEntries(tx, [entryId], { followUpId, carerId: carer.id });
+		// It came before its number was the carer's: what the desks of the organisation owe is owed here from now on.
+		const stray = await findStray(tx, entryId);
+		const about = { followUpId, clinicId: head.followUp.clinicId };
+		if (stray?.stray.settledAt === null) await intoThread(tx, ctx, { actor, about, open: [stray] });
 		return ok(null);
 	});
 }

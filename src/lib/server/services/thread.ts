@@ -3,6 +3,7 @@ import type { StaffActor } from '../../domain/access/roles';
 import type { CheckInResult } from '../../domain/guideline/types';
 import type { Channel } from '../../domain/messaging/kinds';
 import { err, ok, type Result } from '../../domain/result';
+import { formatPhone } from '../../format/phone';
 import type { ThreadCarer, ThreadLine, ThreadView } from '../../schemas/thread';
 import type { Ctx } from '../context';
 import { notFound, type AppError } from '../errors';
@@ -80,7 +81,8 @@ function familyLine({ entry, carerName }: EntryRow, head: Head): ThreadLine {
 		id: entry.id,
 		at: entry.at,
 		from: 'family',
-		who: carerName ?? ofNumber?.name ?? null,
+		// Of a number that is nobody's on record, the number is all that there is to call back.
+		who: carerName ?? ofNumber?.name ?? (entry.phone === null ? null : formatPhone(entry.phone)),
 		words: entry.body,
 		language: ofNumber?.language ?? null,
 		understoodAs: entry.understoodAs,

@@ -1,8 +1,10 @@
 import { OPENS_AFTER } from '../../domain/messaging/breaker';
+import { isStrayBeyond, strayPriority } from '../../domain/messaging/stray';
 import type { Ctx } from '../context';
 import type { Reader, Tx } from '../db/client';
 import { withTx } from '../db/tx';
 import { insertMessages } from '../repos/messages';
+import { listStraysDueBy } from '../repos/stray-texts';
 import {
 	countStuck,
 	insertFindings,
@@ -29,6 +31,7 @@ interface Finding {
 
 /** Two people above the role, one more round, and one of grace. */
 const CLIMBS_BEFORE_WATCH = 4;
+const MOST_STRAYS = 500;
 const MAIL_HOURS = 12;
 const MAIL_LINES = 12;
 const HOUR = 3_600_000;
@@ -62,6 +65,7 @@ const keyOf = ({ kind, subject }: { readonly kind: string; readonly subject: str
 async function look(db: Reader, now: Date): Promise<Finding[]> {
 	const found = [
 		...(await lookAtFollowUps(db, now)),
+		...(await lookAtStrays(db, now)),
 		...(await lookAtMessages(db, now)),
 		...(await lookAtMachinery(db, now))
 	];
@@ -90,6 +94,24 @@ async function lookAtFollowUps(db: Reader, now: Date): Promise<Finding[]> {
 		})
 	);
 	return [...none, ...steps, ...alerts];
+}
+
+/** A text of an unknown number has no site and climbs to nobody: its mail goes to every duty address. */
+async function lookAtStrays(db: Reader, now: Date): Promise<Finding[]> {
+	const overdue = (await listStraysDueBy(db, now, MOST_STRAYS)).map((row) => ({
+		...row,
+		isAlarming: row.priority === strayPriority(true)
+	}));
+	return overdue
+		.filter((one) => isStrayBeyond(one, now))
+		.map(({ entryId, dueAt, isAlarming }) => ({
+			kind: 'stray-text-overdue',
+			subject: entryId,
+			siteId: null,
+			detail:
+				`A text from a number of no family${isAlarming ? ', with alarming words,' : ''} was to be read by ` +
+				`${stamp(dueAt)} and nobody has dealt with it. It stands above the desk's queue.`
+		}));
 }
 
 async function lookAtMessages(db: Reader, now: Date): Promise<Finding[]> {

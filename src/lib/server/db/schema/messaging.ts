@@ -38,7 +38,7 @@ export const messages = mysqlTable(
 	'messages',
 	{
 		id: recordId().primaryKey(),
-		/** Null only for mail to the organisation's own people. */
+		/** Null only for mail to the organisation's own people, and for answers to a number of no family until it has one. */
 		followUpId: recordId().references(() => followUps.id),
 		siteId: recordId()
 			.notNull()
@@ -126,7 +126,7 @@ export const threadEntries = mysqlTable(
 	'thread_entries',
 	{
 		id: recordId().primaryKey(),
-		/** Null while the sender has to say which newborn is meant. */
+		/** Null while the sender has to say which newborn is meant, or a desk whose words they are (`stray_texts`). */
 		followUpId: recordId().references(() => followUps.id),
 		carerId: recordId().references(() => carers.id),
 		phone: asciiWord({ length: 20 }),
