@@ -3,6 +3,7 @@ import { getCallPanel } from '../../src/lib/server/services/call-panel';
 import { getQueue } from '../../src/lib/server/services/queue';
 import { raiseAlert, settleAlert } from '../../src/lib/server/services/alerts';
 import { logAttempt } from '../../src/lib/server/services/attempts';
+import { closeFollowUp } from '../../src/lib/server/services/decisions';
 import { handOver } from '../../src/lib/server/services/discharges';
 import { bookVisit, confirmVisit, markMissed } from '../../src/lib/server/services/visits';
 import { withTx } from '../../src/lib/server/db/tx';
@@ -70,6 +71,18 @@ describe('the front desk’s queue', () => {
 		const alertId = rows[0]?.alerts[0]?.id ?? '';
 		must(await settleAlert(world.ctx, world.east.desk.actor, { alertId, how: 'Called, feeds better.' }));
 		expect(await groupsOf(followUpId)).toBeNull();
+	});
+
+	test('brings in a closed newborn whose family writes after the end, and only then', async () => {
+		const followUpId = await atHome('with-visit');
+		const { pediatrician } = world.east;
+		const end = { followUpId, outcome: 'care-transferred', why: 'Seen elsewhere.' } as const;
+		must(await closeFollowUp(world.ctx, pediatrician.actor, end));
+		expect(await groupsOf(followUpId)).toBeNull();
+		await raise(followUpId, 'check-in-emergency', 'after the end');
+		const { rows } = await queue();
+		expect(rows[0]).toMatchObject({ followUpId, stage: 'closed', nextStep: null, groups: ['needs-call'] });
+		must(await getCallPanel(world.ctx, world.east.desk.actor, followUpId));
 	});
 
 	test('puts an emergency first and counts every newborn once', async () => {

@@ -26,7 +26,8 @@ export interface QueueFacts {
 	readonly followUpId: string;
 	readonly stage: Stage;
 	readonly isHandedOver: boolean;
-	readonly nextStepDueAt: Date;
+	/** Null once it is closed: then only an alert brings it in, for a family may write after the end. */
+	readonly nextStepDueAt: Date | null;
 	readonly windowUntilAt: Date | null;
 	/** Start of the open visit. */
 	readonly visitAt: Date | null;
@@ -52,14 +53,16 @@ export const owedByDesk = ({ role, climb }: Pick<QueueAlert, 'role' | 'climb'>):
 const isUnmarked = ({ stage, visitAt, nextStepDueAt }: QueueFacts, now: Date): boolean =>
 	visitAt !== null &&
 	visitAt < now &&
-	(stage === 'booked' || (stage === 'confirmed' && nextStepDueAt <= now));
+	(stage === 'booked' || (stage === 'confirmed' && nextStepDueAt !== null && nextStepDueAt <= now));
 
 /** The groups in which a newborn stands; none means that the desk owes nothing now. */
 export function queueGroupsOf(facts: QueueFacts, now: Date): QueueGroup[] {
 	const { stage, alerts, nextStepDueAt } = facts;
 	const own = alerts.filter(owedByDesk);
 	const isLaterCheckNear =
-		stage === 'later-check' && nextStepDueAt.getTime() - now.getTime() <= LATER_CHECK_AHEAD;
+		stage === 'later-check' &&
+		nextStepDueAt !== null &&
+		nextStepDueAt.getTime() - now.getTime() <= LATER_CHECK_AHEAD;
 	const holds: Record<QueueGroup, boolean> = {
 		'needs-call': isLaterCheckNear || own.some(({ kind }) => !UNDELIVERED.includes(kind)),
 		'did-not-come': stage === 'missed' || isUnmarked(facts, now),
@@ -84,7 +87,8 @@ const isDesksStep = ({ stage, isHandedOver }: QueueFacts): boolean =>
 /** The first time by which the desk owes something: its next step, or one of its alerts. */
 export function firstDueAt(facts: QueueFacts): Date {
 	const dues = facts.alerts.filter(owedByDesk).map(({ dueAt }) => dueAt);
-	if (isDesksStep(facts) || dues.length === 0) dues.push(facts.nextStepDueAt);
+	const { nextStepDueAt } = facts;
+	if (nextStepDueAt && (isDesksStep(facts) || dues.length === 0)) dues.push(nextStepDueAt);
 	return new Date(Math.min(...dues.map((due) => due.getTime())));
 }
 

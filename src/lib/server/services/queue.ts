@@ -64,11 +64,9 @@ async function listCandidates(
 
 function standingOf(candidates: readonly Candidate[], alerts: readonly AlertRow[], now: Date): Standing[] {
 	const byFollowUp = groupAlerts(alerts);
-	return candidates.flatMap(({ nextStepDueAt, handedOverAt, ...rest }) => {
-		if (!nextStepDueAt) return [];
+	return candidates.flatMap(({ handedOverAt, ...rest }) => {
 		const facts = {
 			...rest,
-			nextStepDueAt,
 			isHandedOver: handedOverAt !== null,
 			alerts: byFollowUp.get(rest.followUpId) ?? []
 		};
