@@ -1,4 +1,5 @@
 import type { AlertKind } from '../domain/followup/alert';
+import type { FindingKind } from '../domain/followup/finding';
 import type { NextStepKind, Outcome, Stage } from '../domain/followup/states';
 import type { VisitKind, VisitState } from '../domain/followup/visit';
 import type { CheckInResult, Feeding } from '../domain/guideline/types';
@@ -42,6 +43,17 @@ export const ALERT_WORDS: Record<AlertKind, string> = {
 	'ladder-step': 'Next try to reach the family',
 	'prolonged-jaundice-check': 'Prolonged-jaundice question',
 	'direct-fraction-raised': 'Direct fraction raised'
+};
+
+export const FINDING_WORDS: Record<FindingKind, string> = {
+	'no-next-step': 'Nothing is owed for an open follow-up',
+	'step-overdue': 'A next step is overdue',
+	'alert-overdue': 'An alert is overdue',
+	'stray-text-overdue': 'A text of an unknown number is unread',
+	'messages-stuck': 'Messages do not move',
+	'worker-silent': 'A worker is silent',
+	'tick-troubled': 'A periodic job is in trouble',
+	'sender-broken': 'A sender is broken'
 };
 
 export const OUTCOME_WORDS: Record<Outcome, string> = {

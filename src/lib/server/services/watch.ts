@@ -1,5 +1,7 @@
 import { OPENS_AFTER } from '../../domain/messaging/breaker';
 import { isStrayBeyond, strayPriority } from '../../domain/messaging/stray';
+import type { FindingKind } from '../../domain/followup/finding';
+import { ALERT_WORDS, NEXT_STEP_WORDS } from '../../format/words';
 import type { Ctx } from '../context';
 import type { Reader, Tx } from '../db/client';
 import { withTx } from '../db/tx';
@@ -21,7 +23,7 @@ import {
 
 /** Something that is owed by nobody, or not moving. */
 interface Finding {
-	readonly kind: string;
+	readonly kind: FindingKind;
 	readonly subject: string;
 	/** Null where it concerns every site. */
 	readonly siteId: string | null;
@@ -73,24 +75,26 @@ async function look(db: Reader, now: Date): Promise<Finding[]> {
 }
 
 async function lookAtFollowUps(db: Reader, now: Date): Promise<Finding[]> {
-	const none = (await listWithoutNextStep(db)).map(({ id, siteId }) => ({
+	const none = (await listWithoutNextStep(db)).map(({ id, siteId }): Finding => ({
 		kind: 'no-next-step',
 		subject: id,
 		siteId,
 		detail: 'An open follow-up has no next step.'
 	}));
-	const steps = (await listStepsBeyond(db, now, CLIMBS_BEFORE_WATCH)).map(({ id, siteId, what, dueAt }) => ({
-		kind: 'step-overdue',
-		subject: id,
-		siteId,
-		detail: `The next step "${what ?? ''}" of a follow-up was due ${stamp(dueAt)} and nobody has taken it.`
-	}));
+	const steps = (await listStepsBeyond(db, now, CLIMBS_BEFORE_WATCH)).map(
+		({ id, siteId, what, dueAt }): Finding => ({
+			kind: 'step-overdue',
+			subject: id,
+			siteId,
+			detail: `“${what ? NEXT_STEP_WORDS[what] : 'Next step'}” of a follow-up was due ${stamp(dueAt)} and nobody has taken it.`
+		})
+	);
 	const alerts = (await listAlertsBeyond(db, now, CLIMBS_BEFORE_WATCH)).map(
-		({ id, siteId, what, dueAt }) => ({
+		({ id, siteId, what, dueAt }): Finding => ({
 			kind: 'alert-overdue',
 			subject: id,
 			siteId,
-			detail: `The alert "${what}" was due ${stamp(dueAt)} and nobody has settled it.`
+			detail: `“${ALERT_WORDS[what]}” was due ${stamp(dueAt)} and nobody has settled it.`
 		})
 	);
 	return [...none, ...steps, ...alerts];
@@ -104,7 +108,7 @@ async function lookAtStrays(db: Reader, now: Date): Promise<Finding[]> {
 	}));
 	return overdue
 		.filter((one) => isStrayBeyond(one, now))
-		.map(({ entryId, dueAt, isAlarming }) => ({
+		.map(({ entryId, dueAt, isAlarming }): Finding => ({
 			kind: 'stray-text-overdue',
 			subject: entryId,
 			siteId: null,
@@ -115,7 +119,7 @@ async function lookAtStrays(db: Reader, now: Date): Promise<Finding[]> {
 }
 
 async function lookAtMessages(db: Reader, now: Date): Promise<Finding[]> {
-	return (await countStuck(db, now)).map(({ siteId, count, oldestAt }) => ({
+	return (await countStuck(db, now)).map(({ siteId, count, oldestAt }): Finding => ({
 		kind: 'messages-stuck',
 		subject: siteId,
 		siteId,
@@ -124,19 +128,19 @@ async function lookAtMessages(db: Reader, now: Date): Promise<Finding[]> {
 }
 
 async function lookAtMachinery(db: Reader, now: Date): Promise<Finding[]> {
-	const workers = (await listSilentWorkers(db, now)).map(({ id, heardAt }) => ({
+	const workers = (await listSilentWorkers(db, now)).map(({ id, heardAt }): Finding => ({
 		kind: 'worker-silent',
 		subject: id,
 		siteId: null,
 		detail: `Worker ${id} was last heard from ${stamp(heardAt)} and did not sign off.`
 	}));
-	const ticks = (await listTroubledTicks(db, now)).map(({ name, lastRunAt, lastError }) => ({
+	const ticks = (await listTroubledTicks(db, now)).map(({ name, lastRunAt, lastError }): Finding => ({
 		kind: 'tick-troubled',
 		subject: name,
 		siteId: null,
 		detail: `The periodic job "${name}" last ran ${stamp(lastRunAt)}${lastError === null ? '' : ' and failed'}.`
 	}));
-	const senders = (await listBrokenSenders(db, OPENS_AFTER)).map(({ id }) => ({
+	const senders = (await listBrokenSenders(db, OPENS_AFTER)).map(({ id }): Finding => ({
 		kind: 'sender-broken',
 		subject: id,
 		siteId: null,

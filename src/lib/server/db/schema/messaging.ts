@@ -1,4 +1,5 @@
 import { boolean, index, int, json, mysqlTable, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core';
+import type { FindingKind } from '../../../domain/followup/finding';
 import type { Channel, MessageKind, MessageState } from '../../../domain/messaging/kinds';
 import type { Language } from '../../../domain/messaging/language';
 import { asciiWord, instant, recordId } from '../columns';
@@ -186,7 +187,7 @@ export const watchFindings = mysqlTable(
 	'watch_findings',
 	{
 		id: recordId().primaryKey(),
-		kind: asciiWord({ length: 32 }).notNull(),
+		kind: asciiWord({ length: 32 }).$type<FindingKind>().notNull(),
 		subject: asciiWord({ length: 80 }).notNull(),
 		siteId: recordId(),
 		detail: varchar({ length: 300 }).notNull(),
