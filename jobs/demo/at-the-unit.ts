@@ -139,6 +139,20 @@ export async function goneHomeWithoutVisit(demo: Demo): Promise<void> {
 				clinic: 1
 			},
 			2
+		],
+		// Nobody made the visit, and the window is over: the newborn that the product is there to prevent.
+		[
+			{
+				family: 'Karimova',
+				given: 'Zilola',
+				weeks: 38,
+				days: 3,
+				values: [at(30, 2.6)],
+				dischargeHour: 36,
+				carer: 'Dilnoza Karimova',
+				language: 'en'
+			},
+			40
 		]
 	];
 	for (const [newborn, hoursAgo] of gone) {

@@ -309,6 +309,17 @@ test.describe('the call panel', () => {
 		await expect(part(page, 'Visit')).toContainText('outside the window, approved');
 	});
 
+	test('says that a window has passed, and offers to ask for a time outside it', async ({ page }) => {
+		await asDesk(page);
+		await openPanel(page, 'Karimova', 'needs-visit');
+		const visit = part(page, 'Visit');
+		await expect(visit.getByText('The window has passed')).toBeVisible();
+		await expect(visit.getByText('Ask the pediatrician below to approve a time.')).toBeVisible();
+		await expect(visit.getByRole('button', { name: 'Book this place' })).toHaveCount(0);
+		await expect(visit.getByRole('group', { name: 'Free places outside the window' })).toBeVisible();
+		await expectAccessible(page);
+	});
+
 	test('works without scripts', async ({ browser, baseURL }) => {
 		const context = await browser.newContext({ javaScriptEnabled: false, ...(baseURL ? { baseURL } : {}) });
 		const page = await context.newPage();
