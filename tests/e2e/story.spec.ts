@@ -3,6 +3,7 @@ import { expect, test, type Browser, type Page } from '@playwright/test';
 import { DateTime } from 'luxon';
 import mysql from 'mysql2/promise';
 import { DEMO_PASSWORD } from '../../jobs/demo/organisation';
+import { expectLight } from './page-weight';
 import { databaseUrl, fakesUrl, origin } from './stack';
 
 /**
@@ -191,6 +192,10 @@ test('a newborn goes from the nurse through telephone, parent and desk to the pe
 		await nurseDischarges(await signedIn(browser, 'nurse@example.org'), zone);
 	});
 	const link = await test.step('the worker sends the confirmation', () => linkOnTelephone(page));
+	await test.step('the parent’s page and its questions are light', async () => {
+		await expectLight(browser, link);
+		await expectLight(browser, `${link}/check-in`);
+	});
 	await test.step('the parent confirms and answers the check-in', () => parentAnswers(page, link));
 	await test.step('the desk calls, settles and marks the arrival', async () => {
 		await deskReceives(await signedIn(browser, 'desk@example.org'));
