@@ -75,13 +75,13 @@ test('the result follows while typing, and a newborn goes home with a visit, a m
 	await expect(result(page)).toContainText('Still needed: date and time of birth and gestational age');
 	await fillNewborn(page, `E2E-${Date.now()}`);
 	await expect(result(page)).toContainText('Follow up in the window');
-	await expect(result(page)).toContainText('below the line');
+	await expect(result(page)).toContainText(/mg\/dL below the phototherapy line/);
 	await result(page).getByText(/^Why:/).click();
 	await expect(result(page)).toContainText('AAP 2022');
 
 	// A higher value asks for more, at once and without saving.
 	await page.locator('[id="measurementTotal[0]"]').fill('24');
-	await expect(result(page)).toContainText('over the line');
+	await expect(result(page)).toContainText(/mg\/dL over the (phototherapy|escalation|exchange) line/);
 	await expect(page.getByText('No visit yet')).toBeVisible();
 	await page.locator('[id="measurementTotal[0]"]').fill('9,4');
 

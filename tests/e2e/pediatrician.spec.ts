@@ -45,7 +45,7 @@ test('the list that waits puts a value over the line first, and opens by keyboar
 	await asPediatrician(page);
 	await page.goto('/waiting');
 	const rows = page.getByRole('row');
-	await expect(rows.nth(1)).toContainText('over the line');
+	await expect(rows.nth(1)).toContainText(/mg\/dL over the (phototherapy|escalation|exchange) line/);
 	await expect(rows.nth(1)).toContainText('Decide');
 	await expect(page.getByText('does not replace clinical judgement')).toBeVisible();
 	await expectAccessible(page);
@@ -53,7 +53,9 @@ test('the list that waits puts a value over the line first, and opens by keyboar
 	await page.keyboard.press('j');
 	await page.keyboard.press('Enter');
 	await expect(page).toHaveURL(/\/follow-ups\/[a-z0-9]+$/);
-	await expect(page.getByText('Phototherapy threshold met').first()).toBeVisible();
+	const standard = part(page, 'By the standard, now');
+	await expect(standard).toContainText('Serum bilirubin at or over the phototherapy line: phototherapy.');
+	await expect(standard).toContainText(/mg\/dL over the phototherapy line/);
 });
 
 test('a value is held against the line while it is typed, refused in words, and nothing typed is lost', async ({
@@ -77,7 +79,7 @@ test('a value is held against the line while it is typed, refused in words, and 
 	await form.getByLabel('Weight').fill('3120');
 	await form.getByRole('button', { name: 'Now', exact: true }).click();
 	await expect(form.getByText('With this value, not saved yet:')).toBeVisible();
-	await expect(form.getByText(/mg\/dL below the line/)).toBeVisible();
+	await expect(form.getByText(/mg\/dL below the phototherapy line/)).toBeVisible();
 	await form.getByRole('button', { name: 'Save the value' }).click();
 
 	await expect(page.getByRole('status').filter({ hasText: 'The value is saved.' })).toBeVisible();

@@ -12,6 +12,7 @@ export {
 	type PublishedRange
 } from './curve';
 export { describeResult } from './explain';
+export { placeOf, placeOfDeciding, resultSays, type Place, type ReachedLine } from './meaning';
 export {
 	directFraction,
 	nextProlongedJaundiceCheckAt,
