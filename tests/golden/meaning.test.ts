@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import {
 	assessAtAnyAge,
+	neurotoxicityRisksSay,
 	placeOf,
 	placeOfDeciding,
 	resultSays,
@@ -199,6 +200,11 @@ describe('what a result means is said by the rule that decided and by the value 
 			'4.0 mg/dL below the phototherapy line',
 			'0.8 mg/dL over the phototherapy line'
 		]);
+	});
+
+	it('says of neurotoxicity risks what the standard makes of them', () => {
+		expect(neurotoxicityRisksSay('aap-2022')).toMatch(/^A neurotoxicity risk factor chooses the lower lines/);
+		expect(neurotoxicityRisksSay('nice-cg98')).toMatch(/no lower lines/);
 	});
 
 	it('the short labels claim nothing of the value', () => {

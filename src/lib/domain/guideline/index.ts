@@ -12,7 +12,14 @@ export {
 	type PublishedRange
 } from './curve';
 export { describeResult } from './explain';
-export { placeOf, placeOfDeciding, resultSays, type Place, type ReachedLine } from './meaning';
+export {
+	neurotoxicityRisksSay,
+	placeOf,
+	placeOfDeciding,
+	resultSays,
+	type Place,
+	type ReachedLine
+} from './meaning';
 export {
 	directFraction,
 	nextProlongedJaundiceCheckAt,

@@ -29,6 +29,12 @@ export function resultSays({ trace, disposition }: Pick<Assessment, 'trace' | 'd
 	return trace.at(-1)?.says ?? disposition;
 }
 
+/** What a neurotoxicity risk factor changes by this standard: the lines of AAP 2022, none of NICE CG98's. */
+export function neurotoxicityRisksSay(standardId: StandardId): string {
+	const rule = standardOf(standardId).rules['risk-curve'];
+	return rule?.says ?? 'This standard has no lower lines for them: weigh them by clinical judgement.';
+}
+
 /** Places a measurement by its standard's own comparison: AAP 2022 counts "equal" as reached, NICE CG98 does not. */
 export function placeOf(held: MeasurementAssessment, standardId: StandardId): Place {
 	const standard = standardOf(standardId);
