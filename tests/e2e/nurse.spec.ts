@@ -145,7 +145,7 @@ test('the second page of the sheet is the written hand-over, with every reason a
 	// The family's page comes first, carries no value, and fits one sheet of A4 within its margins.
 	const family = page.getByRole('article').locator('> div').first();
 	await expect(family).not.toContainText(/mg\/dL|µmol/);
-	await expect(family).toContainText(/tiene una convulsión o tiene 38\.0 °C .*llame al 911 ahora/);
+	await expect(family).toContainText(/tiene una convulsión o tiene 38\.0\s°C.*llame al 911 ahora/);
 	await expect(family).toContainText('no moja el pañal en 8 horas');
 	await page.emulateMedia({ media: 'print' });
 	await page.setViewportSize({ width: A4.width, height: A4.height });

@@ -2,6 +2,8 @@ import { EMERGENCY_SIGN_IDS, HOME_LIMITS, type EmergencySignId } from '../domain
 import type { Language } from '../domain/messaging/language';
 import { familyWords, type FamilyKey } from './family-words';
 
+const NO_BREAK = '\u00a0';
+
 const SIGN_KEYS: Readonly<Record<EmergencySignId, FamilyKey>> = {
 	'cannot-be-woken': 'public_sign_cannot_be_woken',
 	'will-not-feed': 'public_sign_will_not_feed',
@@ -13,12 +15,15 @@ const SIGN_KEYS: Readonly<Record<EmergencySignId, FamilyKey>> = {
 	fever: 'public_sign_fever'
 };
 
+/** "38.0 °C (100.4 °F)" as one word, so that neither a line's end nor a sentence from right to left tears it. */
+function bothScales(celsius: number, fahrenheit: number): string {
+	return `${celsius.toFixed(1)} °C (${fahrenheit.toFixed(1)} °F)`.replaceAll(' ', NO_BREAK);
+}
+
 /** The guideline's figures for the sentences of the catalogues, which hold none themselves. */
 export const LIMIT_INPUTS: Readonly<Record<string, string>> = {
-	fever: HOME_LIMITS.feverCelsius.toFixed(1),
-	feverF: HOME_LIMITS.feverFahrenheit.toFixed(1),
-	cold: HOME_LIMITS.coldCelsius.toFixed(1),
-	coldF: HOME_LIMITS.coldFahrenheit.toFixed(1),
+	fever: bothScales(HOME_LIMITS.feverCelsius, HOME_LIMITS.feverFahrenheit),
+	cold: bothScales(HOME_LIMITS.coldCelsius, HOME_LIMITS.coldFahrenheit),
 	hours: String(HOME_LIMITS.hoursWithoutWet),
 	fewest: String(HOME_LIMITS.fewestFeeds),
 	most: String(HOME_LIMITS.mostFeeds),
