@@ -436,6 +436,17 @@ test('help names the emergency number and the telephone after hours', async ({ p
 	await page.goto('/help');
 	await expect(page.getByRole('link', { name: '911' })).toHaveAttribute('href', 'tel:911');
 	await expect(page.getByText('After hours').first()).toBeVisible();
+	const danger = page.getByRole('region', { name: 'A newborn in danger' });
+	await expect(danger.getByRole('listitem')).toHaveText([
+		'cannot be woken',
+		'will not feed',
+		'is limp',
+		'arches the neck or back',
+		'has a high-pitched cry',
+		'has pauses in breathing',
+		'has a seizure',
+		'has 38.0 °C or more'
+	]);
 	await expectAccessible(page);
 });
 

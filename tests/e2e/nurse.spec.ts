@@ -1,5 +1,5 @@
 import AxeBuilder from '@axe-core/playwright';
-import { expect, test, type Page } from '@playwright/test';
+import { expect, test, type Locator, type Page } from '@playwright/test';
 import { fillNewborn } from './fill-newborn';
 
 /** Everybody of the demo has the same password; see the sign-ins that the start command prints. */
@@ -27,6 +27,12 @@ async function expectAccessible(page: Page): Promise<void> {
 		violations.map(({ id, nodes }) => `${id}: ${nodes.map(({ target }) => target.join(' ')).join(', ')}`)
 	).toEqual([]);
 }
+
+const stepsIn = (within: Locator) =>
+	within.getByRole('list', { name: 'Steps from the values to the result' }).getByRole('listitem');
+const cautionsIn = (within: Locator) => within.getByRole('list', { name: 'Cautions' }).getByRole('listitem');
+/** A4 without the margins of 11 mm, in CSS pixels. */
+const A4 = { width: 710, height: 1039 };
 
 const result = (page: Page) => page.getByRole('region', { name: 'Result' });
 
@@ -75,13 +81,13 @@ test('the result follows while typing, and a newborn goes home with a visit, a m
 	await expect(result(page)).toContainText('Still needed: date and time of birth and gestational age');
 	await fillNewborn(page, `E2E-${Date.now()}`);
 	await expect(result(page)).toContainText('Follow up in the window');
-	await expect(result(page)).toContainText('below the line');
+	await expect(result(page)).toContainText(/mg\/dL below the phototherapy line/);
 	await result(page).getByText(/^Why:/).click();
 	await expect(result(page)).toContainText('AAP 2022');
 
 	// A higher value asks for more, at once and without saving.
 	await page.locator('[id="measurementTotal[0]"]').fill('24');
-	await expect(result(page)).toContainText('over the line');
+	await expect(result(page)).toContainText(/mg\/dL over the (phototherapy|escalation|exchange) line/);
 	await expect(page.getByText('No visit yet')).toBeVisible();
 	await page.locator('[id="measurementTotal[0]"]').fill('9,4');
 
@@ -106,6 +112,49 @@ test('the result follows while typing, and a newborn goes home with a visit, a m
 	await expect(gone.getByRole('link', { name: 'Aldana, Inés' }).first()).toBeVisible();
 	await gone.getByRole('link', { name: 'Aldana, Inés' }).first().click();
 	await expect(page.getByText('The values belong to the clinic now')).toBeVisible();
+});
+
+test('the second page of the sheet is the written hand-over, with every reason and every caution', async ({
+	page
+}) => {
+	test.slow();
+	await asNurse(page);
+	await openNew(page);
+	await fillNewborn(page, `E2E-H${Date.now()}`);
+	await page.getByRole('checkbox', { name: /^Ceftriaxone or a sulfonamide/ }).check();
+	await page.getByRole('button', { name: 'Save for now' }).click();
+	await expect(page.getByText('Not finished yet')).toBeVisible();
+	await result(page).getByText(/^Why:/).click();
+	const steps = stepsIn(result(page));
+	await expect(steps.first()).toBeVisible();
+	const reasons = await steps.allInnerTexts();
+	const cautions = await cautionsIn(result(page)).allInnerTexts();
+	expect(reasons.length).toBeGreaterThan(3);
+	expect(cautions.join()).toMatch(/ceftriaxone/i);
+
+	await page.goto(`${new URL(page.url()).pathname}/sheet`);
+	const handOver = page.getByRole('region', { name: 'For the clinician who sees the newborn next' });
+	expect(await stepsIn(handOver).allInnerTexts()).toEqual(reasons);
+	for (const step of await stepsIn(handOver).all())
+		await expect(step).toContainText(/(AAP 2022|NASPGHAN|Neither standard prints).* · \w+/);
+	expect(await cautionsIn(handOver).allInnerTexts()).toEqual(cautions);
+	await expect(handOver).toContainText('9.4 mg/dL');
+	await expect(handOver).toContainText('does not replace clinical judgement');
+	await expectAccessible(page);
+
+	// The family's page comes first, carries no value, and fits one sheet of A4 within its margins.
+	const family = page.getByRole('article').locator('> div').first();
+	await expect(family).not.toContainText(/mg\/dL|µmol/);
+	await expect(family).toContainText(/tiene una convulsión o tiene 38\.0\s°C.*llame al 911 ahora/);
+	await expect(family).toContainText('no moja el pañal en 8 horas');
+	await page.emulateMedia({ media: 'print' });
+	await page.setViewportSize({ width: A4.width, height: A4.height });
+	expect((await family.boundingBox())?.height).toBeLessThan(A4.height);
+	await expect(handOver).toHaveCSS('break-before', 'page');
+	await page.emulateMedia({ media: 'screen', colorScheme: 'dark' });
+	await page.setViewportSize({ width: 390, height: 844 });
+	expect(await page.evaluate(() => document.documentElement.scrollWidth <= innerWidth)).toBe(true);
+	await expectAccessible(page);
 });
 
 test('a discharge is saved before everything is known, and a record number is taken only once', async ({

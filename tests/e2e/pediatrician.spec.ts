@@ -1,5 +1,5 @@
 import AxeBuilder from '@axe-core/playwright';
-import { expect, test, type Page } from '@playwright/test';
+import { expect, test, type Locator, type Page } from '@playwright/test';
 import { fillNewborn } from './fill-newborn';
 
 /** Everybody of the demo has the same password; see the sign-ins that the start command prints. */
@@ -39,13 +39,17 @@ async function expectAccessible(page: Page): Promise<void> {
 	).toEqual([]);
 }
 
+const stepsIn = (within: Page | Locator) =>
+	within.getByRole('list', { name: 'Steps from the values to the result' }).getByRole('listitem');
+const cautionsIn = (within: Page | Locator) =>
+	within.getByRole('list', { name: 'Cautions' }).getByRole('listitem');
 const part = (page: Page, name: string) => page.getByRole('region', { name, exact: true });
 
 test('the list that waits puts a value over the line first, and opens by keyboard', async ({ page }) => {
 	await asPediatrician(page);
 	await page.goto('/waiting');
 	const rows = page.getByRole('row');
-	await expect(rows.nth(1)).toContainText('over the line');
+	await expect(rows.nth(1)).toContainText(/mg\/dL over the (phototherapy|escalation|exchange) line/);
 	await expect(rows.nth(1)).toContainText('Decide');
 	await expect(page.getByText('does not replace clinical judgement')).toBeVisible();
 	await expectAccessible(page);
@@ -53,7 +57,9 @@ test('the list that waits puts a value over the line first, and opens by keyboar
 	await page.keyboard.press('j');
 	await page.keyboard.press('Enter');
 	await expect(page).toHaveURL(/\/follow-ups\/[a-z0-9]+$/);
-	await expect(page.getByText('Phototherapy threshold met').first()).toBeVisible();
+	const standard = part(page, 'By the standard, now');
+	await expect(standard).toContainText('Serum bilirubin at or over the phototherapy line: phototherapy.');
+	await expect(standard).toContainText(/mg\/dL over the phototherapy line/);
 });
 
 test('a value is held against the line while it is typed, refused in words, and nothing typed is lost', async ({
@@ -77,7 +83,7 @@ test('a value is held against the line while it is typed, refused in words, and 
 	await form.getByLabel('Weight').fill('3120');
 	await form.getByRole('button', { name: 'Now', exact: true }).click();
 	await expect(form.getByText('With this value, not saved yet:')).toBeVisible();
-	await expect(form.getByText(/mg\/dL below the line/)).toBeVisible();
+	await expect(form.getByText(/mg\/dL below the phototherapy line/)).toBeVisible();
 	await form.getByRole('button', { name: 'Save the value' }).click();
 
 	await expect(page.getByRole('status').filter({ hasText: 'The value is saved.' })).toBeVisible();
@@ -159,6 +165,13 @@ test('the end of phototherapy is asked for while it runs', async ({ page }) => {
 test('the summary for the record prints the hand-over without the frame around it', async ({ page }) => {
 	await asPediatrician(page);
 	await open(page, 'Sørensen');
+	await page.getByText('Why: each step of the rule').click();
+	const standard = part(page, 'By the standard, now');
+	await expect(stepsIn(standard).first()).toBeVisible();
+	const reasons = await stepsIn(standard).allInnerTexts();
+	const cautions = await cautionsIn(standard).allInnerTexts();
+	expect(reasons.length).toBeGreaterThan(3);
+	expect(cautions.length).toBeGreaterThan(0);
 	await page.getByRole('link', { name: 'Summary for the record' }).click();
 	await expect(page.getByRole('heading', { level: 1, name: /^Sørensen/ })).toBeVisible();
 	for (const words of [
@@ -170,6 +183,8 @@ test('the summary for the record prints the hand-over without the frame around i
 	]) {
 		await expect(page.getByText(words, { exact: true }).first()).toBeVisible();
 	}
+	expect(await stepsIn(page).allInnerTexts()).toEqual(reasons);
+	expect(await cautionsIn(page).allInnerTexts()).toEqual(cautions);
 	await expectAccessible(page);
 	await page.emulateMedia({ media: 'print' });
 	await expect(page.getByRole('banner').first()).toBeHidden();
@@ -239,4 +254,31 @@ test('a newborn who came without being on record is entered at the clinic', asyn
 	await page.getByRole('button', { name: 'Save for now' }).click();
 	await page.waitForURL(/\/discharges\/[a-z0-9]+\?saved=1$/);
 	await expect(page.getByLabel('Record number', { exact: true })).toHaveValue('E2E-UNANNOUNCED');
+});
+
+test('a newborn under phototherapy, now below the line, does not read as at or over it', async ({ page }) => {
+	await asPediatrician(page);
+	await open(page, 'Sørensen');
+	const standard = part(page, 'By the standard, now');
+	await expect(standard).toContainText(/mg\/dL over the phototherapy line/);
+	const form = part(page, 'New value');
+	await form.getByRole('radio', { name: 'TSB' }).check();
+	await form.getByLabel('Total').fill('10.2');
+	await form.getByRole('button', { name: 'Now', exact: true }).click();
+	await expect(form.getByText('With this value, not saved yet:')).toBeVisible();
+	await form.getByRole('button', { name: 'Save the value' }).click();
+	await expect(page.getByRole('status').filter({ hasText: 'The value is saved.' })).toBeVisible();
+
+	await expect(standard).toContainText('Phototherapy is running.');
+	await expect(standard).toContainText(/mg\/dL below the phototherapy line/);
+	expect(await standard.innerText()).not.toMatch(/at or over|over the phototherapy line|threshold met/i);
+	await page.getByRole('link', { name: 'Summary for the record' }).click();
+	await expect(page.getByText('The value stands', { exact: true }).locator('+ dd')).toHaveText(
+		/below the phototherapy line/
+	);
+	await page.goto('/waiting');
+	const row = page.getByRole('row').filter({ hasText: 'Sørensen' });
+	await expect(row).toContainText(/mg\/dL below the phototherapy line/);
+	await expect(row).not.toContainText(/at or over|over the phototherapy line|threshold met/i);
+	await expectAccessible(page);
 });

@@ -90,6 +90,8 @@ describe('values', () => {
 		expect(formatDifference(4.2, 'mg/dL')).toBe('4.2 mg/dL below the line');
 		expect(formatDifference(-0.6, 'mg/dL')).toBe('0.6 mg/dL over the line');
 		expect(formatDifference(0, 'mg/dL')).toBe('at the line');
+		expect(formatDifference(-0.4, 'umol/L')).toBe('0.4 µmol/L over the line');
+		expect(formatDifference(30.4, 'umol/L')).toBe('30 µmol/L below the line');
 	});
 
 	it('writes gestation, weight change and telephone numbers', () => {

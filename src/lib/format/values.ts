@@ -24,9 +24,11 @@ export function formatBilirubin({ value, unit }: Bilirubin): string {
 
 /** Threshold minus value in words: "4.2 mg/dL below the line", "0.6 mg/dL over the line", "at the line". */
 export function formatDifference(difference: number, unit: BilirubinUnit): string {
-	const size = formatBilirubinNumber(Math.abs(difference), unit);
 	if (difference === 0) return 'at the line';
-	return `${size} ${unitLabel(unit)} ${difference > 0 ? 'below' : 'over'} the line`;
+	const size = Math.abs(difference);
+	// Less than one whole step is not nothing: "0.4 µmol/L over the line", never "0".
+	const written = size < 1 ? size.toFixed(1) : formatBilirubinNumber(size, unit);
+	return `${written} ${unitLabel(unit)} ${difference > 0 ? 'below' : 'over'} the line`;
 }
 
 /** "38 weeks 2 days". */
@@ -65,15 +67,18 @@ export function windowTestLabel(test: WindowTest): string {
 const DISPOSITIONS: Record<Disposition, string> = {
 	'follow-up': 'Follow up in the window',
 	judgement: 'Follow up by clinical judgement',
-	'measure-first': 'Measure before discharge',
+	'measure-first': 'Measure bilirubin first',
 	'confirm-serum': 'Confirm by serum (TSB)',
 	'delay-discharge': 'Delay discharge',
-	phototherapy: 'Phototherapy threshold met',
-	escalate: 'Escalation threshold met',
-	exchange: 'Exchange threshold met'
+	phototherapy: 'Phototherapy',
+	escalate: 'Escalation of care, an emergency',
+	exchange: 'Exchange transfusion, an emergency'
 };
 
-/** The engine's result in a few words, for a heading. */
+/**
+ * The engine's result in a few words, for a heading or a list. It claims nothing of the value: under running
+ * phototherapy that may lie below the line. What the result means is `resultSays`, where the value stands `placeOf`.
+ */
 export function dispositionLabel(disposition: Disposition): string {
 	return DISPOSITIONS[disposition];
 }

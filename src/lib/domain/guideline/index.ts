@@ -11,7 +11,23 @@ export {
 	type CurveRequest,
 	type PublishedRange
 } from './curve';
+export {
+	EMERGENCY_SIGN_IDS,
+	EMERGENCY_SIGNS,
+	emergencySignsSay,
+	type EmergencySign,
+	type EmergencySignId
+} from './emergency-signs';
 export { describeResult } from './explain';
+export { HOME_LIMITS } from './home-limits';
+export {
+	neurotoxicityRisksSay,
+	placeOf,
+	placeOfDeciding,
+	resultSays,
+	type Place,
+	type ReachedLine
+} from './meaning';
 export {
 	directFraction,
 	nextProlongedJaundiceCheckAt,

@@ -7,14 +7,15 @@ import { notFound } from '../errors';
 import { findDischargePage, findOrganisationRules, listDischargeParts } from '../repos/discharge-pages';
 import { findNewbornRecord } from '../repos/newborns';
 import { listLinks } from '../repos/parent-links';
-import { assessRecord } from './assessment';
+import { assessRecord, lastLeftAt } from './assessment';
 import { windowOf } from './discharge-list';
 import { dischargeResource, factsOf } from './discharge-view';
 import { isLinkAlive, linkUrl } from './parent-links';
 import { qrPicture } from './qr';
 
 /**
- * What the family takes home on paper: visit, numbers, their own link, and the values for whoever sees the newborn.
+ * What the family takes home on paper: visit, numbers, their own link; and, for the clinician who sees the newborn
+ * next, the values with cautions and reasons, reckoned as the follow-up's own window was.
  * Links exist from the hand-over on; a sheet printed before it carries none. Opening the sheet is recorded.
  * @returns not found also where it is of other sites, and for those who may not see the values
  */
@@ -30,7 +31,7 @@ export async function getDischargeSheet(ctx: Ctx, actor: StaffActor, followUpId:
 	const links = (await listLinks(ctx.db, [followUpId])).filter((link) => isLinkAlive(link, now));
 	const assessed = assessRecord(record, {
 		standard: followUp.standard,
-		dischargeAt: followUp.handedOverAt ?? followUp.plannedDischargeAt,
+		dischargeAt: lastLeftAt(followUp, record),
 		now
 	});
 	await recordAccess(ctx.db, ctx, {
@@ -51,6 +52,7 @@ export async function getDischargeSheet(ctx: Ctx, actor: StaffActor, followUpId:
 		window: windowOf(page),
 		visit: visits.find(({ isOpen }) => isOpen === true) ?? null,
 		assessment: assessed.ok ? assessed.value : null,
+		refusals: assessed.ok ? [] : assessed.error,
 		families: record.carers.map((carer) => {
 			const link = links.find(({ carerId }) => carerId === carer.id);
 			const url = link ? linkUrl(ctx, link.id) : null;

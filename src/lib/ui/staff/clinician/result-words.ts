@@ -2,20 +2,6 @@ import type { Assessment, Disposition, RateOfRise } from '../../../domain/guidel
 import { formatDayTime, formatSpan } from '../../../format/time';
 import { formatBilirubin, formatBilirubinNumber, unitLabel, windowTestLabel } from '../../../format/values';
 
-/** The result as a sentence that says what to do, for the top of a panel. */
-export const RESULT_SAYS: Readonly<Record<Disposition, string>> = {
-	'follow-up': 'Below the line: see the newborn again inside the window.',
-	judgement: 'Whether and when to see the newborn again is left to clinical judgement.',
-	'measure-first': 'No value that may decide: measure bilirubin first.',
-	'confirm-serum': 'Confirm by serum (TSB) before deciding.',
-	'delay-discharge':
-		'Close to the line before 24 hours of age: the standard asks to keep the newborn and measure again.',
-	phototherapy: 'At or over the phototherapy threshold: treat.',
-	escalate:
-		'At or over the escalation threshold: an emergency. Intensive care, intensive phototherapy, urgent tests.',
-	exchange: 'At or over the exchange threshold: an emergency. Exchange transfusion is to be considered now.'
-};
-
 /** True where the result asks for treatment now. */
 export const isDanger = (disposition: Disposition): boolean =>
 	disposition === 'phototherapy' || disposition === 'escalate' || disposition === 'exchange';

@@ -1,4 +1,8 @@
-import { JAUNDICE_RISK_DEFINITIONS, NEUROTOXICITY_RISK_DEFINITIONS } from '../../../domain/guideline';
+import {
+	JAUNDICE_RISK_DEFINITIONS,
+	NEUROTOXICITY_RISK_DEFINITIONS,
+	placeOf
+} from '../../../domain/guideline';
 import type {
 	Assessment,
 	BilirubinUnit,
@@ -16,7 +20,6 @@ import { formatDayTime } from '../../../format/time';
 import {
 	formatBilirubin,
 	formatBilirubinNumber,
-	formatDifference,
 	formatWeight,
 	formatWeightChange,
 	methodLabel,
@@ -112,12 +115,12 @@ export function valueLines(
 			written
 		];
 		if (value.status === 'entered-in-error') return [...start, 'struck', value.struckBecause ?? ''];
-		if (!held) return [...start, 'none', 'not held against a line'];
-		const { thresholds, difference, trusted } = held;
+		if (!assessment || !held) return [...start, 'none', 'not held against a line'];
+		const { thresholds, trusted } = held;
 		return [
 			...start,
 			`${formatBilirubinNumber(thresholds.phototherapy, thresholds.unit)} ${unitLabel(thresholds.unit)}`,
-			`${formatDifference(difference, thresholds.unit)}${trusted ? '' : '; not to be decided on'}`
+			`${placeOf(held, assessment.standard).says}${trusted ? '' : '; not to be decided on'}`
 		];
 	});
 }
