@@ -187,7 +187,7 @@ describe('what a result means is said by the rule that decided and by the value 
 		const known = assessAtAnyAge(newborn({ bilirubin: [value(48, 12), value(15 * 24, 9)] }));
 		if (!known.ok) throw new Error('refused');
 		expect(resultSays(known.value)).toBe(
-			'A value past the last published hour is held against no line: clinical judgement.'
+			'The latest value lies past the last published hour and is held against no line: clinical judgement.'
 		);
 		expect(placeOfDeciding(known.value)).toBeNull();
 	});
