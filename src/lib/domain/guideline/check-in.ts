@@ -45,8 +45,9 @@ const isYellow = ({ answers }: Facts): boolean =>
 const isFaceOrChest = ({ answers }: Facts): boolean =>
 	answers.yellowArea === 'face' || answers.yellowArea === 'chest';
 
-/** Lost weight as a share of birth weight; 0 when not known. */
+/** Lost weight as a share of birth weight; 0 when not known, all of it when the weight given is no number. */
 function lostShare({ answers, context }: Facts): number {
+	if (Number.isNaN(answers.weightGrams)) return 1;
 	if (answers.weightGrams === undefined || !context.birthWeightGrams) return 0;
 	return (context.birthWeightGrams - answers.weightGrams) / context.birthWeightGrams;
 }
@@ -87,7 +88,7 @@ const EMERGENCY: readonly TriageRule[] = [
 		'emergency',
 		'temperatureCelsius',
 		['Fever of 38.0 °C or more.', SOURCES.fever],
-		({ answers }) => (answers.temperatureCelsius ?? 0) >= TEMPERATURE.feverFrom
+		({ answers }) => !((answers.temperatureCelsius ?? 0) < TEMPERATURE.feverFrom)
 	)
 ];
 
