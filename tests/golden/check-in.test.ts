@@ -33,7 +33,7 @@ const CASES: readonly (readonly [CheckInResult, Partial<CheckInAnswers>])[] = [
 	['as-planned', { yellowArea: 'chest', yellowDepth: 'clear' }],
 	['as-planned', { yellowArea: 'chest', yellowDepth: 'pale', yellowChange: 'not-sure' }],
 	['as-planned', { yellowArea: 'face', yellowChange: 'less' }],
-	['call-back', { yellowArea: 'face', yellowChange: 'more' }],
+	['today', { yellowArea: 'face', yellowChange: 'more' }],
 	['today', { yellowArea: 'face', yellowDepth: 'deep-or-orange' }],
 	['today', { eyesYellow: 'yes-and-more' }],
 	['call-back', { eyesYellow: 'yes' }],

@@ -113,6 +113,12 @@ const TODAY: readonly TriageRule[] = [
 	),
 	rule(
 		'today',
+		'yellowChange',
+		['The yellow is getting stronger.', SOURCES.sameDay],
+		({ answers }) => answers.yellowChange === 'more'
+	),
+	rule(
+		'today',
 		'eyesYellow',
 		['The white of the eyes is yellow and more than before.', SOURCES.sameDay],
 		({ answers }) => answers.eyesYellow === 'yes-and-more'
@@ -162,12 +168,6 @@ const TODAY: readonly TriageRule[] = [
 ];
 
 const CALL_BACK: readonly TriageRule[] = [
-	rule(
-		'call-back',
-		'yellowChange',
-		['The yellow is getting stronger.', SOURCES.product],
-		({ answers }) => answers.yellowChange === 'more'
-	),
 	rule(
 		'call-back',
 		'eyesYellow',
