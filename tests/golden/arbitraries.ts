@@ -49,7 +49,7 @@ const sketch: fc.Arbitrary<Sketch> = fc.record({
 	)
 });
 
-const sketches: fc.Arbitrary<Sketch[]> = fc.oneof(
+const sketches: fc.Arbitrary<readonly Sketch[]> = fc.oneof(
 	{ weight: 1, arbitrary: fc.constant([]) },
 	{ weight: 8, arbitrary: fc.tuple(sketch) },
 	{ weight: 7, arbitrary: fc.array(sketch, { minLength: 2, maxLength: 4 }) }
