@@ -13,7 +13,7 @@ import { at, BORN_AT, newborn, value } from './newborn';
 /** A busy machine must not fail a test of a rule. */
 vi.setConfig({ testTimeout: 120_000 });
 /** Every run looks at every minute up to the end of the lines. */
-const RUNS = Number(process.env['PROPERTY_RUNS'] ?? 200);
+const RUNS = Number(process.env['PROPERTY_RUNS'] ?? 100);
 
 function rate(
 	standard: StandardId,
