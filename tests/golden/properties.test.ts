@@ -4,6 +4,7 @@ import {
 	JAUNDICE_RISKS,
 	NEUROTOXICITY_RISKS,
 	assess,
+	assessAtAnyAge,
 	thresholdsAt,
 	type AssessmentInput,
 	type BilirubinUnit,
@@ -120,6 +121,37 @@ describe('what follows', () => {
 				expect(dueMs(more)).toBeLessThanOrEqual(dueMs(input));
 			}),
 			{ numRuns: RUNS }
+		);
+	});
+
+	it('does not depend on the order in which values and courses are given', () => {
+		const shuffled = newborns({ dischargedBefore: true }).chain((input) =>
+			fc.tuple(
+				fc.constant(input),
+				fc.shuffledSubarray([...input.bilirubin], { minLength: input.bilirubin.length }),
+				fc.shuffledSubarray([...input.phototherapy], { minLength: input.phototherapy.length })
+			)
+		);
+		const said = (input: AssessmentInput) => {
+			const result = assess(input);
+			if (!result.ok) throw new Error(JSON.stringify(result.error));
+			const { disposition, window, difference, thresholds, cautions, directFraction } = result.value;
+			return { disposition, window, difference, thresholds, directFraction, cautions };
+		};
+		fc.assert(
+			fc.property(shuffled, ([input, bilirubin, phototherapy]) => {
+				expect(said({ ...input, bilirubin, phototherapy })).toEqual(said(input));
+			}),
+			{ numRuns: RUNS }
+		);
+	});
+
+	it('is the same at any age as long as every value lies within the lines', () => {
+		fc.assert(
+			fc.property(newborns({ dischargedBefore: true }), (input) => {
+				expect(assessAtAnyAge(input)).toEqual(assess(input));
+			}),
+			{ numRuns: RUNS / 5 }
 		);
 	});
 
