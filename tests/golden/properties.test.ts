@@ -75,11 +75,8 @@ describe('lines', () => {
 	});
 });
 
-/** The same newborn with the deciding value raised by so many steps of its unit. */
-function raised(input: AssessmentInput, steps: number): AssessmentInput | null {
-	const before = assess(input);
-	if (!before.ok || before.value.decidingIndex === null) return null;
-	const index = before.value.decidingIndex;
+/** The same newborn with one value raised by so many steps of its unit. */
+function raisedAt(input: AssessmentInput, index: number, steps: number): AssessmentInput {
 	const by = (unit: BilirubinUnit): number => (unit === 'mg/dL' ? steps / 10 : steps);
 	return {
 		...input,
@@ -87,6 +84,13 @@ function raised(input: AssessmentInput, steps: number): AssessmentInput | null {
 			i === index ? { ...one, total: Math.round((one.total + by(one.unit)) * 10) / 10 } : one
 		)
 	};
+}
+
+/** The same newborn with the deciding value raised. */
+function raised(input: AssessmentInput, steps: number): AssessmentInput | null {
+	const before = assess(input);
+	if (!before.ok || before.value.decidingIndex === null) return null;
+	return raisedAt(input, before.value.decidingIndex, steps);
 }
 
 function isNeverLaterForAHigherValue(dischargedBefore: boolean): void {
@@ -113,6 +117,28 @@ describe('what follows', () => {
 	it('is never later for a higher value', () => isNeverLaterForAHigherValue(false));
 
 	it('is never later for an added neurotoxicity risk', () => isNeverLaterForAnAddedRisk(false));
+
+	// By NICE an earlier value that is raised may show that the next one falls.
+	it('is never later for any value raised by AAP 2022, the deciding one or not', () => {
+		const values = newborns({ standard: 'aap-2022' });
+		fc.assert(
+			fc.property(values, fc.nat({ max: 3 }), fc.integer({ min: 1, max: 80 }), (input, index, steps) => {
+				expect(dueMs(raisedAt(input, index, steps))).toBeLessThanOrEqual(dueMs(input));
+			}),
+			{ numRuns: RUNS }
+		);
+	});
+
+	it('is never later for a newborn one week younger in gestation by AAP 2022', () => {
+		fc.assert(
+			fc.property(newborns({ standard: 'aap-2022' }), (input) => {
+				const { weeks: given, days } = input.gestationalAge;
+				const younger = { ...input, gestationalAge: { weeks: Math.max(given - 1, 35), days } };
+				expect(dueMs(younger)).toBeLessThanOrEqual(dueMs(input));
+			}),
+			{ numRuns: RUNS }
+		);
+	});
 
 	it('is never later for an added jaundice risk, whenever discharge was', () => {
 		fc.assert(
