@@ -211,6 +211,13 @@ const SHARED: readonly Row[] = [
 		{ bilirubin: [value(30, 6, 'transcutaneous'), value(40, 8)] },
 		rise([30, 6], [40, 8])
 	),
+	row(
+		['any', 'rapid-rise-two-methods'],
+		'not from a value that must not be trusted',
+		'FACTS 2.6',
+		{ bilirubin: [value(50, 6, 'transcutaneous'), value(60, 9)] },
+		{ phototherapy: [course(30, 45)], bilirubin: [value(50, 6, 'transcutaneous'), value(60, 9)] }
+	),
 	row(['any', 'hearing-test'], 'serum at the exchange line', 'FACTS 7', total(24), total(23.9)),
 	row(
 		['any', 'hearing-test'],
