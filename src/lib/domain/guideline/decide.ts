@@ -134,7 +134,7 @@ function outcomeOf(
 	const outcome = byValue(deciding, readings, known, standard);
 	if (deciding === readings[readings.length - 1]) return outcome;
 	const worrying = readings.filter(
-		(one) => one.distrust !== null && one.confirm !== null && one.atMs >= deciding.atMs
+		(one) => one.distrust !== null && one.atMs >= deciding.atMs && standard.isNearLine(one)
 	);
 	switch (outcome.disposition) {
 		case 'exchange':

@@ -1,6 +1,6 @@
 import { formatGestationalAge, HOUR_MS, shownHours } from './age';
 import { liverFinding, measuringCheck } from './liver';
-import { exceedsLimit, projectedCrossingAt, risePerHour } from './rate';
+import { exceedsLimit, pairsOf, projectedCrossingAt, risePerHour } from './rate';
 import { SHARED_RULES } from './shared-rules';
 import type { Decision, Lines, Outcome, Reading, Rule, Standard } from './standard';
 import type {
@@ -74,15 +74,8 @@ function measurementsOf(readings: readonly Reading[], standard: Standard): Measu
 		}));
 }
 
-/** Each trusted value against the one before it. */
 function ratesOf(readings: readonly Reading[], standard: Standard, decision: Decision): RateOfRise[] {
-	const trusted = readings.filter((reading) => reading.distrust === null);
-	const rates: RateOfRise[] = [];
-	trusted.forEach((later, i) => {
-		const earlier = trusted[i - 1];
-		if (earlier && earlier.atMs < later.atMs) rates.push(rateOf(earlier, later, standard, decision.case));
-	});
-	return rates;
+	return pairsOf(readings).map(({ earlier, later }) => rateOf(earlier, later, standard, decision.case));
 }
 
 /** The rate of rise of a pair, its published limit, and where it leads. */

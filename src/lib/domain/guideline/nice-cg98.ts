@@ -118,6 +118,8 @@ export const niceCg98: Standard = {
 	weigh,
 	confirm,
 	distrust,
+	isNearLine: ({ confirm: asks, difference }) =>
+		asks !== null || difference <= edition.REPEAT.withinMicromoles,
 	follow,
 	afterTreatment,
 	underTreatment: () => plain('phototherapy', 'treatment.running'),

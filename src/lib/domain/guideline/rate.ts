@@ -17,21 +17,37 @@ export function exceedsLimit(perHour: number, endAgeMs: number, standard: Limite
 
 export type RapidRise = 'none' | 'one-method' | 'two-methods';
 
-/** Whether any trusted value rose too fast from the one before it, and whether both were taken by one method. */
-export function rapidRise(readings: readonly Reading[], standard: Limited): RapidRise {
+/** A pair that is held against the limit, earlier first. */
+export interface RisingPair {
+	readonly earlier: Reading;
+	readonly later: Reading;
+}
+
+/** Each trusted value with the one before it and, where that is another, the one before it by the same method. */
+export function pairsOf(readings: readonly Reading[]): RisingPair[] {
+	const pairs: RisingPair[] = [];
 	let before: Reading | undefined;
+	let serum: Reading | undefined;
+	let skin: Reading | undefined;
+	for (const later of readings) {
+		if (later.distrust !== null) continue;
+		const same = later.serum ? serum : skin;
+		if (same && same !== before) pairs.push({ earlier: same, later });
+		if (before) pairs.push({ earlier: before, later });
+		before = later;
+		if (later.serum) serum = later;
+		else skin = later;
+	}
+	return pairs;
+}
+
+/** Whether any trusted value rose too fast, and whether both of its pair were taken by one method. */
+export function rapidRise(readings: readonly Reading[], standard: Limited): RapidRise {
 	let found: RapidRise = 'none';
-	for (const reading of readings) {
-		if (reading.distrust !== null) continue;
-		if (
-			before &&
-			before.atMs < reading.atMs &&
-			exceedsLimit(risePerHour(before, reading), reading.ageMs, standard)
-		) {
-			if (before.serum === reading.serum) return 'one-method';
-			found = 'two-methods';
-		}
-		before = reading;
+	for (const { earlier, later } of pairsOf(readings)) {
+		if (!exceedsLimit(risePerHour(earlier, later), later.ageMs, standard)) continue;
+		if (earlier.serum === later.serum) return 'one-method';
+		found = 'two-methods';
 	}
 	return found;
 }

@@ -132,6 +132,8 @@ export interface Standard {
 	confirm(total: number, difference: number): string | null;
 	/** Why a transcutaneous value must not decide, given the readings before it; null when it may. */
 	distrust(reading: Reading, earlier: readonly Reading[], known: Case): string | null;
+	/** Whether a value that must not decide stands so near the line that serum is asked for all the same. */
+	isNearLine(reading: Reading): boolean;
 	/** What to do about a trusted value below the phototherapy line, apart from any treatment. */
 	follow(reading: Reading, readings: readonly Reading[], known: Case): Outcome;
 	/** What is still owed after the last course ended; null when done. */
