@@ -1,5 +1,5 @@
 import { HOUR_MS } from './age';
-import { isRaisedDirect, liverStatus } from './liver';
+import { EARLIEST_CHECK_MS, isRaisedDirect, liverStatus } from './liver';
 import { rapidRise } from './rate';
 import { LOW_ALBUMIN_GRAMS_PER_DECILITRE } from './risks';
 import type { Decision, Reading, Standard } from './standard';
@@ -170,27 +170,31 @@ export function cautionShared(
 		if (caution) cautions.push(caution);
 	}
 	cautionValues(decision, standard, cautions);
-	if (decision.case.lowAlbumin) cautions.push(SHARED['low-albumin']);
-	const albumin = input.albuminGramsPerDecilitre;
-	if (
-		albumin !== undefined &&
-		albumin >= LOW_ALBUMIN_GRAMS_PER_DECILITRE &&
-		input.neurotoxicityRisks.includes('low-albumin')
-	) {
-		cautions.push(SHARED['albumin-differs']);
-	}
-	if (!standard.usesRiskCurves && decision.case.atRisk) cautions.push(SHARED['no-lower-line']);
-	if (
-		input.neurotoxicityRisks.includes('sepsis') ||
-		input.neurotoxicityRisks.includes('clinical-instability')
-	) {
-		cautions.push(SHARED.unstable);
-	}
+	if (decision.case.atRisk) cautionRisks(decision, standard, cautions);
 	cautionOutcome(decision, cautions);
 	if (decision.outcome.rule === 'past-the-lines') cautionPastTheLines(decision, standard, cautions);
 	if (isCourseMissing(decision)) cautions.push(SHARED['course-missing']);
-	const liver = liverStatus(input, standard);
-	if (liver === 'due' || liver === 'overdue') cautions.push(SHARED['prolonged-due']);
+	if (isOfLiverAge(decision)) cautionLiver(decision, standard, cautions);
+}
+
+function cautionRisks(
+	{ case: known }: Omit<Decision, 'cautions'>,
+	standard: Standard,
+	cautions: Caution[]
+): void {
+	const { neurotoxicityRisks, albuminGramsPerDecilitre: albumin } = known.input;
+	if (known.lowAlbumin) cautions.push(SHARED['low-albumin']);
+	if (
+		albumin !== undefined &&
+		albumin >= LOW_ALBUMIN_GRAMS_PER_DECILITRE &&
+		neurotoxicityRisks.includes('low-albumin')
+	) {
+		cautions.push(SHARED['albumin-differs']);
+	}
+	if (!standard.usesRiskCurves) cautions.push(SHARED['no-lower-line']);
+	if (neurotoxicityRisks.includes('sepsis') || neurotoxicityRisks.includes('clinical-instability')) {
+		cautions.push(SHARED.unstable);
+	}
 }
 
 function cautionValues(
@@ -208,7 +212,7 @@ function cautionValues(
 	}
 	if (hasUntrusted) cautions.push(SHARED['untrusted-value']);
 	if (isLow) cautions.push(SHARED['check-unit']);
-	const rapid = readings.length > 1 ? rapidRise(readings, standard) : 'none';
+	const rapid = rapidRise(readings, standard);
 	if (rapid !== 'none')
 		cautions.push(SHARED[rapid === 'one-method' ? 'rapid-rise' : 'rapid-rise-two-methods']);
 	if (reachedExchange) cautions.push(SHARED['hearing-test']);
@@ -271,4 +275,20 @@ function hasVeryHighSkinValue(deciding: Reading | null, readings: readonly Readi
 		if (reading.zone === 'escalate' || reading.zone === 'exchange') return true;
 	}
 	return false;
+}
+
+/** Before the first check of any standard nothing is due, which is all that most of a batch needs to know. */
+function isOfLiverAge({ readings, outcome, case: known }: Omit<Decision, 'cautions'>): boolean {
+	if (outcome.rule === 'past-the-lines') return true;
+	const askedMs = known.input.now?.getTime() ?? readings[readings.length - 1]?.atMs ?? -Infinity;
+	return askedMs - known.bornMs >= EARLIEST_CHECK_MS;
+}
+
+function cautionLiver(
+	{ case: known }: Omit<Decision, 'cautions'>,
+	standard: Standard,
+	cautions: Caution[]
+): void {
+	const liver = liverStatus(known.input, standard);
+	if (liver === 'due' || liver === 'overdue') cautions.push(SHARED['prolonged-due']);
 }

@@ -1,6 +1,6 @@
 import { formatGestationalAge, HOUR_MS, shownHours } from './age';
 import { liverFinding, measuringCheck } from './liver';
-import { exceedsLimit, pairsOf, projectedCrossingAt, risePerHour } from './rate';
+import { exceedsLimit, forEachPair, projectedCrossingAt, risePerHour } from './rate';
 import { SHARED_RULES } from './shared-rules';
 import type { Decision, Lines, Outcome, Reading, Rule, Standard } from './standard';
 import type {
@@ -75,7 +75,9 @@ function measurementsOf(readings: readonly Reading[], standard: Standard): Measu
 }
 
 function ratesOf(readings: readonly Reading[], standard: Standard, decision: Decision): RateOfRise[] {
-	return pairsOf(readings).map(({ earlier, later }) => rateOf(earlier, later, standard, decision.case));
+	const rates: RateOfRise[] = [];
+	forEachPair(readings, (earlier, later) => rates.push(rateOf(earlier, later, standard, decision.case)));
+	return rates;
 }
 
 /** The rate of rise of a pair, its published limit, and where it leads. */

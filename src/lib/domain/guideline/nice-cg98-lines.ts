@@ -2,14 +2,14 @@ import { HOUR_MS } from './age';
 import { NICE_CG98_TABLE } from './editions/nice-cg98-table';
 import * as edition from './editions/nice-cg98';
 import type { Lines, StopAsked } from './standard';
-import { decodePoints, valueAt, type Point } from './tables';
+import { decodePoints, valueAt, type Curve } from './tables';
 
 export const FIRST_WEEK = 23;
 const CURVES: Readonly<Record<string, string>> = NICE_CG98_TABLE.curves;
 const PHOTO = pointsOf('photo');
 const EXCHANGE = pointsOf('exchange');
 
-function pointsOf(table: 'photo' | 'exchange'): readonly (readonly Point[])[] {
+function pointsOf(table: 'photo' | 'exchange'): readonly Curve[] {
 	return Array.from({ length: 16 }, (_, i) => decodePoints(CURVES[`${table} ${FIRST_WEEK + i}`] ?? ''));
 }
 

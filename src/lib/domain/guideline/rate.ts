@@ -17,38 +17,37 @@ export function exceedsLimit(perHour: number, endAgeMs: number, standard: Limite
 
 export type RapidRise = 'none' | 'one-method' | 'two-methods';
 
-/** A pair that is held against the limit, earlier first. */
-export interface RisingPair {
-	readonly earlier: Reading;
-	readonly later: Reading;
-}
-
-/** Each trusted value with the one before it and, where that is another, the one before it by the same method. */
-export function pairsOf(readings: readonly Reading[]): RisingPair[] {
-	const pairs: RisingPair[] = [];
+/**
+ * Goes through the pairs that are held against the limit: each trusted value with the one before it and, where that is
+ * another, the one before it by the same method.
+ */
+export function forEachPair(
+	readings: readonly Reading[],
+	look: (earlier: Reading, later: Reading) => void
+): void {
 	let before: Reading | undefined;
 	let serum: Reading | undefined;
 	let skin: Reading | undefined;
 	for (const later of readings) {
 		if (later.distrust !== null) continue;
 		const same = later.serum ? serum : skin;
-		if (same && same !== before) pairs.push({ earlier: same, later });
-		if (before) pairs.push({ earlier: before, later });
+		if (same && same !== before) look(same, later);
+		if (before) look(before, later);
 		before = later;
 		if (later.serum) serum = later;
 		else skin = later;
 	}
-	return pairs;
 }
 
-/** Whether any trusted value rose too fast, and whether both of its pair were taken by one method. */
+/** Whether any trusted value rose too fast, and whether both of such a pair were taken by one method. */
 export function rapidRise(readings: readonly Reading[], standard: Limited): RapidRise {
 	let found: RapidRise = 'none';
-	for (const { earlier, later } of pairsOf(readings)) {
-		if (!exceedsLimit(risePerHour(earlier, later), later.ageMs, standard)) continue;
-		if (earlier.serum === later.serum) return 'one-method';
-		found = 'two-methods';
-	}
+	if (readings.length < 2) return found;
+	forEachPair(readings, (earlier, later) => {
+		if (found === 'one-method') return;
+		if (!exceedsLimit(risePerHour(earlier, later), later.ageMs, standard)) return;
+		found = earlier.serum === later.serum ? 'one-method' : 'two-methods';
+	});
 	return found;
 }
 

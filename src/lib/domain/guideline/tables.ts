@@ -16,27 +16,32 @@ export interface Point {
 	readonly value: number;
 }
 
-/** Reads '0:40 72:130' as points. */
-export function decodePoints(text: string): readonly Point[] {
-	return text.split(' ').map((pair) => {
+/** Points in order of age, and for each completed hour the place of the last point at or before it. */
+export interface Curve {
+	readonly points: readonly Point[];
+	readonly placeAtHour: readonly number[];
+}
+
+/** Reads '0:40 72:130' as a curve; its points lie at whole hours. */
+export function decodePoints(text: string): Curve {
+	const points = text.split(' ').map((pair) => {
 		const [hour, value] = pair.split(':');
 		return { hour: Number(hour), value: Number(value) };
 	});
+	const placeAtHour: number[] = [];
+	points.forEach(({ hour }, place) => {
+		const until = points[place + 1]?.hour ?? hour + 1;
+		for (let at = hour; at < until; at++) placeAtHour[at] = place;
+	});
+	return { points, placeAtHour };
 }
 
-/** The value of a curve at an age: straight between points, flat after the last; the first point must be at or before it. */
-export function valueAt(points: readonly Point[], hours: number): number {
-	let before = points[0];
+/** The value of a curve at an age: straight between points, flat after the last; throws before the first. */
+export function valueAt({ points, placeAtHour }: Curve, hours: number): number {
+	const place = placeAtHour[Math.floor(hours)] ?? (hours > 0 ? points.length - 1 : -1);
+	const before = points[place];
 	if (!before || hours < before.hour) throw new RangeError(`the curve does not reach hour ${hours}`);
-	for (let i = 1; i < points.length; i++) {
-		const point = points[i];
-		if (!point) break;
-		if (point.hour > hours) {
-			return (
-				before.value + ((point.value - before.value) * (hours - before.hour)) / (point.hour - before.hour)
-			);
-		}
-		before = point;
-	}
-	return before.value;
+	const after = points[place + 1];
+	if (!after) return before.value;
+	return before.value + ((after.value - before.value) * (hours - before.hour)) / (after.hour - before.hour);
 }

@@ -87,7 +87,12 @@ export function answerCheckIn(
 		if (!record) return err(notFound);
 		const now = ctx.clock.now();
 		const birthWeightGrams = record.newborn.birthWeightGrams ?? undefined;
-		const triage = triageCheckIn(answers, { bornAt: record.newborn.bornAt, now, birthWeightGrams });
+		const triage = triageCheckIn(answers, {
+			bornAt: record.newborn.bornAt,
+			feeding: record.newborn.feeding,
+			now,
+			birthWeightGrams
+		});
 		const id = ctx.random.id();
 		await tx.insert(checkIns).values({
 			id,
