@@ -27,7 +27,7 @@ The fields of a JSON record are published in static/schemas/assessment-input.sch
 static/schemas/assessment-output.schema.json.
 
 ${CSV_HELP}
-The values come from public transcriptions of the standards and are to be signed off by a qualified clinician before
+The values come from public copies of the standards and are to be signed off by a qualified clinician before
 they are used for patients. A result is an aid: clinical judgement and local policy come first.
 `;
 

@@ -3,7 +3,6 @@ import { beforeEach, describe, expect, it } from 'vitest';
 import { alerts, checkIns, parentLinks, transitions, visits } from '../../src/lib/server/db/schema/follow-up';
 import { closedDays, openings, sites } from '../../src/lib/server/db/schema/organisation';
 import { DEFAULT_POLICY } from '../../src/lib/domain/followup/policy';
-import type { CheckInAnswers } from '../../src/lib/domain/guideline/types';
 import { answerCheckIn } from '../../src/lib/server/services/check-ins';
 import { climbOverdue } from '../../src/lib/server/services/climb';
 import { handOver } from '../../src/lib/server/services/discharges';
@@ -17,6 +16,7 @@ import {
 	moveVisit
 } from '../../src/lib/server/services/visits';
 import { openTestDatabase } from '../support/database';
+import { WELL } from '../support/well-newborn';
 import { must, openWorld } from '../support/follow-up-world';
 
 const database = await openTestDatabase();
@@ -153,26 +153,6 @@ describe('an unmet due time', () => {
 		);
 	});
 });
-
-const WELL: CheckInAnswers = {
-	yellowArea: 'none',
-	yellowChange: 'same',
-	yellowDepth: 'none',
-	eyesYellow: 'no',
-	feedsIn24Hours: 10,
-	wetIn24Hours: 6,
-	dirtyIn24Hours: 4,
-	hoursSinceWet: 1,
-	stoolColour: 'yellow',
-	urineColour: 'pale',
-	waking: 'wakes-for-feeds',
-	suck: 'strong',
-	cry: 'normal',
-	tone: 'normal',
-	breathing: 'normal',
-	seizure: false,
-	worried: false
-};
 
 describe('a check-in', () => {
 	it('pressed twice is one check-in with one set of alerts', async () => {

@@ -4,28 +4,8 @@ import {
 	type CheckInContext,
 	type CheckInResult
 } from '../../src/lib/domain/guideline/index';
+import { WELL } from '../support/well-newborn';
 import { at, BORN_AT } from './newborn';
-
-/** The answers of a newborn who is well at any age: enough feeds and diapers, no yellow, nothing wrong. */
-export const WELL: CheckInAnswers = {
-	yellowArea: 'none',
-	yellowChange: 'same',
-	yellowDepth: 'none',
-	eyesYellow: 'no',
-	feedsIn24Hours: 9,
-	wetIn24Hours: 6,
-	dirtyIn24Hours: 4,
-	hoursSinceWet: 2,
-	stoolColour: 'yellow',
-	urineColour: 'pale',
-	waking: 'wakes-for-feeds',
-	suck: 'strong',
-	cry: 'normal',
-	tone: 'normal',
-	breathing: 'normal',
-	seizure: false,
-	worried: false
-};
 
 /** Asked at an age in hours. */
 export const atAge = (hours: number, more: Partial<CheckInContext> = {}): CheckInContext => ({

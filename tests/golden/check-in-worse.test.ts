@@ -6,7 +6,8 @@ import {
 	type CheckInContext,
 	type CheckInResult
 } from '../../src/lib/domain/guideline/index';
-import { atAge, WELL } from './answers';
+import { WELL } from '../support/well-newborn';
+import { atAge } from './answers';
 
 /** A busy machine must not fail a test of a rule. */
 vi.setConfig({ testTimeout: 60_000 });

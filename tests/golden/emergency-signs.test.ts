@@ -7,28 +7,10 @@ import {
 	YELLOW_AREAS,
 	type CheckInAnswers
 } from '../../src/lib/domain/guideline/index';
+import { WELL } from '../support/well-newborn';
 import { at, BORN_AT } from './newborn';
 
-/** Day 4, nothing that asks for more than the planned visit. */
-const WELL: CheckInAnswers = {
-	yellowArea: 'none',
-	yellowChange: 'same',
-	yellowDepth: 'none',
-	eyesYellow: 'no',
-	feedsIn24Hours: 9,
-	wetIn24Hours: 6,
-	dirtyIn24Hours: 4,
-	hoursSinceWet: 2,
-	stoolColour: 'yellow',
-	urineColour: 'pale',
-	waking: 'wakes-for-feeds',
-	suck: 'strong',
-	cry: 'normal',
-	tone: 'normal',
-	breathing: 'normal',
-	seizure: false,
-	worried: false
-};
+/** On day 4, where a well newborn's answers ask for no more than the planned visit. */
 const judged = (answers: Partial<CheckInAnswers>) =>
 	triageCheckIn({ ...WELL, ...answers }, { bornAt: BORN_AT, now: at(80) });
 

@@ -52,7 +52,7 @@ function differing(cells: readonly Cell[]): string[] {
 	return wrong;
 }
 
-describe('AAP 2022 tables (Pediatrics 2022;150(3):e2022058859, public transcriptions)', () => {
+describe('AAP 2022 tables (Pediatrics 2022;150(3):e2022058859, public copies)', () => {
 	const csv = csvOf('aap-2022');
 	const rows = rowsOf(csv);
 

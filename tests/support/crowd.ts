@@ -4,7 +4,9 @@ import { messages, threadEntries } from '../../src/lib/server/db/schema/messagin
 import { strayTexts } from '../../src/lib/server/db/schema/stray-text';
 import { carers, measurements, newborns, phototherapyCourses } from '../../src/lib/server/db/schema/newborn';
 import type { Stage } from '../../src/lib/domain/followup/states';
+import type { CheckInAnswers } from '../../src/lib/domain/guideline/types';
 import { systemRandom } from '../../src/lib/server/random';
+import { WELL } from './well-newborn';
 
 const HOUR = 3_600_000;
 const CHUNK = 500;
@@ -221,22 +223,4 @@ function oneOf(at: CrowdAt, stage: Stage, index: number) {
 	};
 }
 
-const ANSWERS = {
-	yellowArea: 'face',
-	yellowChange: 'same',
-	yellowDepth: 'pale',
-	eyesYellow: 'no',
-	feedsIn24Hours: 9,
-	wetIn24Hours: 5,
-	dirtyIn24Hours: 4,
-	hoursSinceWet: 3,
-	stoolColour: 'yellow',
-	urineColour: 'pale',
-	waking: 'wakes-for-feeds',
-	suck: 'strong',
-	cry: 'normal',
-	tone: 'normal',
-	breathing: 'normal',
-	seizure: false,
-	worried: false
-} as const;
+const ANSWERS: CheckInAnswers = { ...WELL, yellowArea: 'face', yellowDepth: 'pale' };
