@@ -35,7 +35,7 @@ describe('a trace for people', () => {
 			trace.map(({ inputs }) => Object.keys(inputs).length)
 		);
 		expect(new Set(shown.map(({ sure }) => sure))).toEqual(
-			new Set(['transcribed from the publication', 'as printed', 'our reading of the text'])
+			new Set(['as in public copies', 'as printed', 'our reading of the text'])
 		);
 	});
 

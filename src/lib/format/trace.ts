@@ -14,7 +14,7 @@ export interface TraceLine {
 
 const SURE: Record<TraceStep['confidence'], string> = {
 	printed: 'as printed',
-	transcribed: 'transcribed from the publication',
+	transcribed: 'as in public copies',
 	'from memory': 'from memory, not checked against the print',
 	'common practice, no source': 'common practice, no source',
 	'our reading': 'our reading of the text'
